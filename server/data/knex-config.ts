@@ -1,0 +1,40 @@
+import type { Knex } from 'knex'
+
+const toSnake = (name: string) => name.replace(/[A-Z]/g, letter => `_${letter.toLowerCase()}`)
+const toCamel = (name: string) => name.replace(/_([a-z0-9])/g, (_, letter: string) => letter.toUpperCase())
+
+/** Column names are snake_case in SQL and camelCase in code; rows are renamed here and nowhere else. */
+function camelRow(row: unknown): unknown {
+  if (row === null || typeof row !== 'object' || Array.isArray(row) || Buffer.isBuffer(row)) return row
+  const renamed: Record<string, unknown> = {}
+  for (const [key, value] of Object.entries(row)) renamed[toCamel(key)] = value
+  return renamed
+}
+
+interface RawConnection { pragma: (source: string) => unknown }
+
+/**
+ * The one Knex configuration, for the server, the command line and the tests.
+ * One connection: SQLite has one writer, and Lucia shares it (see `server/services/sessions.ts`).
+ */
+export function knexConfigFor(filename: string): Knex.Config {
+  return {
+    client: 'better-sqlite3',
+    connection: { filename },
+    useNullAsDefault: true,
+    pool: {
+      min: 1,
+      max: 1,
+      afterCreate(connection: RawConnection, done: (error: Error | null, connection: RawConnection) => void) {
+        connection.pragma('journal_mode = WAL')
+        connection.pragma('synchronous = FULL')
+        connection.pragma('busy_timeout = 5000')
+        connection.pragma('foreign_keys = ON')
+        done(null, connection)
+      },
+    },
+    acquireConnectionTimeout: 5000,
+    wrapIdentifier: (name, original) => (name === '*' ? name : original(toSnake(name))),
+    postProcessResponse: (result: unknown) => (Array.isArray(result) ? result.map(camelRow) : camelRow(result)),
+  }
+}

@@ -1,0 +1,26 @@
+import type { Knex } from 'knex'
+import * as peopleAndSites from '../../migrations/0001_people_and_sites'
+import * as dutiesAndCredentials from '../../migrations/0002_duties_and_credentials'
+import * as learning from '../../migrations/0003_learning'
+import * as briefings from '../../migrations/0004_briefings'
+import * as mailAndAudit from '../../migrations/0005_mail_and_audit'
+
+/** Every migration, by the file name that the Knex command line records; a unit test keeps this equal to the folder. */
+export const migrations: Record<string, Knex.Migration> = {
+  '0001_people_and_sites.ts': peopleAndSites,
+  '0002_duties_and_credentials.ts': dutiesAndCredentials,
+  '0003_learning.ts': learning,
+  '0004_briefings.ts': briefings,
+  '0005_mail_and_audit.ts': mailAndAudit,
+}
+
+/** Knex reads migrations from here, because a built server has no migrations folder. */
+export const migrationSource: Knex.MigrationSource<string> = {
+  getMigrations: async () => Object.keys(migrations),
+  getMigrationName: name => name,
+  getMigration: async (name) => {
+    const migration = migrations[name]
+    if (!migration) throw new Error(`No migration is called ${name}`)
+    return migration
+  },
+}
