@@ -124,8 +124,13 @@ export function isKnownTimeZone(timeZone: string): boolean {
   return ZONE_NAME.test(timeZone) && succeeds(() => new Intl.DateTimeFormat('en-US', { timeZone }))
 }
 
+/** Names already found good. Asking the platform costs more than the date sum itself, and the names are few. */
+const zonesSeen = new Set<string>()
+
 function requireZone(timeZone: string): string {
+  if (zonesSeen.has(timeZone)) return timeZone
   if (!isKnownTimeZone(timeZone)) throw new RangeError(`Not a known time zone: ${timeZone}`)
+  zonesSeen.add(timeZone)
   return timeZone
 }
 
