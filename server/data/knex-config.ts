@@ -34,7 +34,8 @@ export function knexConfigFor(filename: string): Knex.Config {
       },
     },
     acquireConnectionTimeout: 5000,
-    wrapIdentifier: (name, original) => (name === '*' ? name : original(toSnake(name))),
+    // Knex also asks for the name of an unnamed primary key, which is undefined.
+    wrapIdentifier: (name: string | undefined, original) => (!name || name === '*' ? original(name ?? '') : original(toSnake(name))),
     postProcessResponse: (result: unknown) => (Array.isArray(result) ? result.map(camelRow) : camelRow(result)),
   }
 }

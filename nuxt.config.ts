@@ -1,0 +1,103 @@
+import { resolve } from 'node:path'
+
+const languages = [
+  { code: 'en', language: 'en-US', name: 'English' },
+  { code: 'es', language: 'es-US', name: 'Español' },
+] as const
+/** One message file per part of the product, the same names in each language. */
+const messageFiles = ['common', 'sign-in', 'people', 'learn', 'briefing', 'credentials', 'records', 'errors']
+
+export default defineNuxtConfig({
+  modules: ['@nuxt/eslint', '@pinia/nuxt', '@nuxtjs/tailwindcss', '@nuxtjs/i18n', '@nuxt/content', 'nuxt-security', './modules/route-list'],
+  srcDir: '.',
+  compatibilityDate: '2026-01-01',
+  devtools: { enabled: false },
+  telemetry: false,
+  css: ['~/assets/css/main.css'],
+  components: [
+    { path: '~/components/content', global: true, pathPrefix: false },
+    { path: '~/components' },
+  ],
+  app: {
+    head: {
+      titleTemplate: '%s · Pourwright',
+      meta: [
+        { name: 'viewport', content: 'width=device-width, initial-scale=1, viewport-fit=cover' },
+        { name: 'theme-color', content: '#F5F4EF', media: '(prefers-color-scheme: light)' },
+        { name: 'theme-color', content: '#14181A', media: '(prefers-color-scheme: dark)' },
+      ],
+      link: [{ rel: 'icon', type: 'image/svg+xml', href: '/icon.svg' }],
+    },
+  },
+  /** Each can be set by an environment variable: `NUXT_DATABASE_PATH`, `NUXT_CLOCK`, and so on; the README has the table. */
+  runtimeConfig: {
+    databasePath: '.data/pourwright.sqlite',
+    filesPath: '',
+    signingKeyPath: '',
+    signingKey: '',
+    clock: '',
+    demo: '',
+    origin: '',
+    tls: '',
+    smtpUrl: '',
+    mailFrom: 'Pourwright <pourwright@localhost>',
+    setupToken: '',
+  },
+  i18n: {
+    strategy: 'no_prefix',
+    defaultLocale: 'en',
+    locales: languages.map(({ code, ...rest }) => ({ code, ...rest, files: messageFiles.map(file => `${code}/${file}.json`) })),
+    detectBrowserLanguage: { useCookie: true, cookieKey: 'language', fallbackLocale: 'en' },
+    bundle: { optimizeTranslationDirective: false },
+  },
+  content: {
+    database: { type: 'sqlite', filename: ':memory:' },
+    experimental: { sqliteConnector: 'better-sqlite3' },
+    build: { markdown: { highlight: false, toc: { depth: 2 } } },
+    renderer: { anchorLinks: false },
+  },
+  tailwindcss: { viewer: false, cssPath: false },
+  security: {
+    rateLimiter: false,
+    xssValidator: false,
+    requestSizeLimiter: false,
+    corsHandler: false,
+    headers: {
+      referrerPolicy: 'same-origin',
+      crossOriginEmbedderPolicy: false,
+      strictTransportSecurity: false,
+      permissionsPolicy: { camera: ['self'] },
+      contentSecurityPolicy: {
+        'default-src': ['\'self\''],
+        'script-src': ['\'self\'', '\'nonce-{{nonce}}\'', '\'strict-dynamic\''],
+        'style-src': ['\'self\'', '\'unsafe-inline\''],
+        'img-src': ['\'self\'', 'data:', 'blob:'],
+        'font-src': ['\'self\''],
+        'connect-src': ['\'self\''],
+        'worker-src': ['\'self\''],
+        'object-src': ['\'none\''],
+        'base-uri': ['\'none\''],
+        'form-action': ['\'self\''],
+        'frame-ancestors': ['\'none\''],
+        'upgrade-insecure-requests': false,
+      },
+    },
+  },
+  nitro: {
+    compressPublicAssets: true,
+    experimental: { tasks: true },
+    scheduledTasks: { '* * * * *': ['mail:send'], '*/15 * * * *': ['reminders:queue', 'briefings:seal'] },
+    serverAssets: [],
+    typescript: { tsConfig: { include: [resolve('./migrations'), resolve('./seeds')] } },
+  },
+  typescript: { strict: true, typeCheck: false },
+  eslint: { config: { stylistic: true } },
+  hooks: {
+    // Content writes every collection into a public dump; nothing of it may be prerendered or served (see server/middleware/0.content-gate.ts).
+    'nitro:config': (config) => {
+      for (const [path, rules] of Object.entries(config.routeRules ?? {})) {
+        if (path.includes('__nuxt_content')) rules.prerender = false
+      }
+    },
+  },
+})
