@@ -1,0 +1,26 @@
+import type { Db } from './database'
+
+export interface Company {
+  name: string
+  timeZone: string
+  language: 'en' | 'es'
+  markAsked: 'tap' | 'signature'
+  isDemo: boolean
+}
+
+/** The company of this database; before set-up an unnamed one in UTC, so that public pages can still answer. */
+export async function getCompany(db: Db): Promise<Company> {
+  const row = await db('company').first()
+  if (!row) return { name: '', timeZone: 'UTC', language: 'en', markAsked: 'tap', isDemo: false }
+  return { name: row.name, timeZone: row.timeZone, language: row.language, markAsked: row.markAsked, isDemo: row.isDemo === 1 }
+}
+
+/** Writes the company's one row. Throws when there is one already. */
+export async function insertCompany(db: Db, company: Omit<Company, 'markAsked'> & { markAsked?: Company['markAsked'] }, now: string): Promise<void> {
+  await db('company').insert({ id: 1, ...company, createdAt: now })
+}
+
+/** Changes the company's settings. */
+export async function updateCompany(db: Db, changes: Partial<Omit<Company, 'isDemo'>>): Promise<void> {
+  await db('company').where({ id: 1 }).update(changes)
+}
