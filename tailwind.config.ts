@@ -25,7 +25,7 @@ export default {
       },
       fontFamily: {
         sans: ['Atkinson Hyperlegible', 'system-ui', 'sans-serif'],
-        mono: ['ui-monospace', 'SFMono-Regular', 'Menlo', 'DejaVu Sans Mono', 'monospace'],
+        mono: ['Atkinson Hyperlegible Mono', 'ui-monospace', 'SFMono-Regular', 'Menlo', 'DejaVu Sans Mono', 'monospace'],
       },
       minHeight: { field: '3.5rem', row: '2.75rem' },
       borderRadius: { DEFAULT: '3px' },

@@ -44,16 +44,36 @@ class PooledAdapter extends BetterSqlite3Adapter {
     }
   }
 
-  override setSession = (session: DatabaseSession) => this.#borrow(() => super.setSession({ ...session, id: sha256(session.id) }))
-  override deleteSession = (id: string) => this.#borrow(() => super.deleteSession(sha256(id)))
-  override deleteUserSessions = (userId: string) => this.#borrow(() => super.deleteUserSessions(userId))
-  override getUserSessions = (userId: string) => this.#borrow(() => super.getUserSessions(userId))
-  override updateSessionExpiration = (id: string, at: Date) => this.#borrow(() => super.updateSessionExpiration(sha256(id), at))
-  override deleteExpiredSessions = () => this.#borrow(() => super.deleteExpiredSessions())
-  override getSessionAndUser = (id: string): Promise<[DatabaseSession | null, DatabaseUser | null]> => this.#borrow(async () => {
-    const [session, user] = await super.getSessionAndUser(sha256(id))
-    return [session && { ...session, id }, user]
-  })
+  override async setSession(session: DatabaseSession) {
+    return this.#borrow(() => super.setSession({ ...session, id: sha256(session.id) }))
+  }
+
+  override async deleteSession(id: string) {
+    return this.#borrow(() => super.deleteSession(sha256(id)))
+  }
+
+  override async deleteUserSessions(userId: string) {
+    return this.#borrow(() => super.deleteUserSessions(userId))
+  }
+
+  override async getUserSessions(userId: string) {
+    return this.#borrow(() => super.getUserSessions(userId))
+  }
+
+  override async updateSessionExpiration(id: string, at: Date) {
+    return this.#borrow(() => super.updateSessionExpiration(sha256(id), at))
+  }
+
+  override async deleteExpiredSessions() {
+    return this.#borrow(() => super.deleteExpiredSessions())
+  }
+
+  override async getSessionAndUser(id: string): Promise<[DatabaseSession | null, DatabaseUser | null]> {
+    return this.#borrow(async () => {
+      const [session, user] = await super.getSessionAndUser(sha256(id))
+      return [session && { ...session, id }, user]
+    })
+  }
 }
 
 function luciaFor(db: Db, hasTls: boolean) {

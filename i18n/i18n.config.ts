@@ -1,0 +1,1 @@
+export default defineI18nConfig(() => ({ legacy: false, fallbackLocale: 'en', missingWarn: false, fallbackWarn: false }))

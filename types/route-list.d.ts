@@ -1,0 +1,3 @@
+declare module '#route-list' {
+  export const routeList: { method: string, path: string, load: () => Promise<unknown> }[]
+}

@@ -1,0 +1,14 @@
+import type { Actor } from '#shared/access/abilities'
+import type { Db } from '~~/server/data/database'
+import type { Settings } from '~~/server/services/settings'
+
+declare module 'h3' {
+  interface H3EventContext {
+    db: Db
+    settings: Settings
+    /** The signed-in person, or null. */
+    actor: Actor | null
+  }
+}
+
+export {}
