@@ -20,7 +20,7 @@ export interface ClearancePerson {
   under18Until?: CalendarDate | null
 }
 
-/** A hold takes a person off all duties, first and last day included; without a last day until it is ended. */
+/** A hold takes a person off all duties, first and last day included; without a last day, until it is ended. */
 export interface Hold {
   from: CalendarDate
   to?: CalendarDate | null
@@ -144,7 +144,7 @@ function missingOfPerson({ person, duty, date, holds = [] }: ClearanceQuestion):
 
 /** The eve of leaving or of the next hold, whichever comes first; null when neither is written down. */
 function lastDayOfPerson({ person, date, holds = [] }: ClearanceQuestion): CalendarDate | null {
-  const ends = holds.map(hold => hold.from).filter(from => from > date)
+  const ends = holds.filter(hold => hold.from > date && (!hold.to || hold.to >= hold.from)).map(hold => hold.from)
   if (person.leftOn) ends.push(person.leftOn)
   const [first] = ends.sort()
   return first === undefined ? null : addDays(first, -1)
@@ -172,12 +172,13 @@ function lastDayFor(
   const { date, siteId, allowances = [] } = question
   const type = question.types.get(credential.type)
   if (!type || !isForSite(credential, type, siteId)) return undefined
-  const dated = { ...credential, expiresOn: expiryForDuty(credential, type, recencyFor(group, question)) }
-  if (isCountingOn(dated, date)) return { until: lastCountingDay(dated), allowedFor: null }
-  const isAllowed = dated.verification === 'unverified' && canBeAllowedForAShift(type)
+  const isAllowed = credential.verification === 'unverified' && canBeAllowedForAShift(type)
     && allowances.some(allowance => allowance.credentialId === credential.id && allowance.siteId === siteId && allowance.date === date)
-    && isCountingOn({ ...dated, verification: 'verified' }, date)
-  return isAllowed ? { until: date, allowedFor: credential.id } : undefined
+  const seen: Credential = isAllowed ? { ...credential, verification: 'verified' } : credential
+  if (!isCountingOn(seen, date)) return undefined
+  const expiresOn = expiryForDuty(seen, type, recencyFor(group, question))
+  if (expiresOn !== null && expiresOn < date) return undefined
+  return isAllowed ? { until: date, allowedFor: credential.id } : { until: lastCountingDay({ ...seen, expiresOn }), allowedFor: null }
 }
 
 function recencyFor(group: RuleGroup, { duty, lastDoneOn }: ClearanceQuestion) {
@@ -200,7 +201,7 @@ function answerUnmet(group: RuleGroup, question: PreparedQuestion): GroupAnswer 
 function wayToMeet(code: string, group: RuleGroup, question: PreparedQuestion) {
   const { siteId, date, types } = question
   const type = types.get(code) ?? { code, validity: { kind: 'never' }, basis: 'company', leadDays: 0 } satisfies CredentialType
-  const held = question.held.get(code) ?? []
+  const held = types.has(code) ? question.held.get(code) ?? [] : []
   const why = whyMissing({ type, held, siteId, date, recency: recencyFor(group, question) })
   const learning = type.module ? question.learning?.get(type.module) : undefined
   const isKnown = hasStandingKnowledge(learning, held, date)

@@ -36,14 +36,13 @@ export function ruleProblem(rule: Pick<Rule, 'groups'>): 'noGroups' | 'emptyGrou
 /** Indexes the rules of a company once. The list is copied, so that a later change to it changes nothing here. */
 export function prepareRules(rules: readonly Rule[]): PreparedRules {
   const kept = rules.map(rule => ({ scope: rule.appliesTo, groups: rule.groups.map(group => [...new Set(group)]) }))
-  const answers = new Map<string, readonly RuleGroup[]>()
+  const answersBySite = new Map<string | null, Map<string, readonly RuleGroup[]>>()
 
   function groupsFor(duty: string, siteId: string | null): readonly RuleGroup[] {
-    const key = JSON.stringify([duty, siteId])
-    const known = answers.get(key)
-    if (known) return known
-    const groups = collectGroups(kept, duty, siteId)
-    answers.set(key, groups)
+    const answers = answersBySite.get(siteId) ?? new Map<string, readonly RuleGroup[]>()
+    answersBySite.set(siteId, answers)
+    const groups = answers.get(duty) ?? collectGroups(kept, duty, siteId)
+    answers.set(duty, groups)
     return groups
   }
 
