@@ -30,7 +30,7 @@ export const referenceTypes: TypeSeed[] = [
   { code: 'respirator-fit', name: { en: 'Respirator fit test', es: 'Prueba de ajuste de respirador' }, validity: months(12), basis: 'law', source: '29 CFR 1910.134(f)(2): every 12 months, one per facepiece' },
   { code: 'respirator-training', name: { en: 'Respirator training', es: 'Capacitación de respirador' }, validity: months(12), basis: 'law', source: '29 CFR 1910.134(k)(5): every 12 months' },
   { code: 'silica', name: { en: 'Silica', es: 'Sílice' }, validity: never, basis: 'law', source: '29 CFR 1926.1153(i)(2): no fixed interval' },
-  { code: 'site-orientation', name: { en: 'Site orientation', es: 'Orientación del sitio' }, validity: never, basis: 'site', perSite: true, source: 'Company rule: once at each site' },
+  { code: 'site-orientation', name: { en: 'Site orientation', es: 'Orientación de la obra' }, validity: never, basis: 'site', perSite: true, source: 'Company rule: once at each site' },
   { code: 'heat-illness', name: { en: 'Heat illness prevention', es: 'Prevención de golpe de calor' }, validity: { kind: 'period', months: 12, anchor: 'monthEnd' }, basis: 'company', source: 'Company rule: yearly' },
   { code: 'outreach-card', name: { en: 'Outreach card (10 or 30 hours)', es: 'Tarjeta de 10 o 30 horas' }, validity: never, basis: 'issuer', source: 'Issuer: kept as a card; meets no rule by itself' },
 ]
@@ -48,15 +48,15 @@ interface DutySeed {
 
 /** The duties on the wall, with what each asks for until the safety manager changes it. */
 export const referenceDuties: DutySeed[] = [
-  { code: 'stacker', name: { en: 'Stacker', es: 'Bloquero' }, asks: [['stacking'], ['running-bond']] },
+  { code: 'stacker', name: { en: 'Stacker', es: 'Colocador de bloques' }, asks: [['stacking'], ['running-bond']] },
   { code: 'brace-hand', name: { en: 'Brace hand', es: 'Puntalero' }, asks: [['bracing-and-plumb'], ['fall-protection'], ['scaffold-user']] },
   { code: 'rebar-hand', name: { en: 'Rebar hand', es: 'Varillero' }, asks: [['steel']] },
   { code: 'hose-hand', name: { en: 'Hose hand', es: 'Manguerero' }, learningBeside: false, sameDayFix: false, recencyMonths: 6, asks: [['pump-and-hose'], ['blowout-response'], ['fall-protection']] },
   { code: 'vibrator-hand', name: { en: 'Vibrator hand', es: 'Vibradorista' }, sameDayFix: false, recencyMonths: 6, asks: [['concrete-for-walls'], ['pour-rate'], ['fall-protection']] },
-  { code: 'wall-watcher', name: { en: 'Wall watcher', es: 'Vigía de muro' }, recencyMonths: 6, asks: [['before-the-pour'], ['blowout-response']] },
-  { code: 'pump-spotter', name: { en: 'Pump spotter', es: 'Señalero de bomba' }, sameDayFix: false, recencyMonths: 6, asks: [['pump-and-hose'], ['blowout-response']] },
+  { code: 'wall-watcher', name: { en: 'Wall watcher', es: 'Vigía del muro' }, recencyMonths: 6, asks: [['before-the-pour'], ['blowout-response']] },
+  { code: 'pump-spotter', name: { en: 'Pump spotter', es: 'Guía de la bomba' }, sameDayFix: false, recencyMonths: 6, asks: [['pump-and-hose'], ['blowout-response']] },
   { code: 'telehandler-operator', name: { en: 'Telehandler operator', es: 'Operador de telehandler' }, sameDayFix: false, asks: [['lift-truck']] },
-  { code: 'pour-lead', name: { en: 'Pour lead', es: 'Líder de colado' }, sameDayFix: false, recencyMonths: 6, asks: [['pour-lead'], ['blowout-response'], ['first-aid-cpr']] },
+  { code: 'pour-lead', name: { en: 'Pour lead', es: 'Encargado del colado' }, sameDayFix: false, recencyMonths: 6, asks: [['pour-lead'], ['blowout-response'], ['first-aid-cpr']] },
 ]
 
 const moduleTypes = (): TypeSeed[] => modules.map(module => ({

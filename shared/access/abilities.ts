@@ -1,9 +1,9 @@
+import type { Language, Role } from '../domain/states'
+
 /**
  * Who may do what, decided in one place. A role's row is its abilities; whose records an ability reaches
  * (own crews, own sites) is the server's `Reach`. Screens hide with the same functions that routes refuse with.
  */
-export const roles = ['worker', 'foreman', 'superintendent', 'safety', 'admin'] as const
-export type Role = typeof roles[number]
 
 /** Somebody signed in. `role` is what they may act as now: a badge sign-in has a worker's abilities, whoever it is. */
 export interface Actor {
@@ -12,7 +12,7 @@ export interface Actor {
   role: Role
   /** The role that the company gave, whatever the way in. */
   givenRole: Role
-  language: 'en' | 'es'
+  language: Language
   via: 'password' | 'badge'
 }
 

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { roles } from '../access/abilities'
+import { roles } from '../domain/states'
 import { language, line } from './common'
 
 /** By e-mail and password, or by badge and PIN. */
