@@ -88,6 +88,8 @@ export default defineNuxtConfig({
     experimental: { tasks: true },
     scheduledTasks: { '* * * * *': ['mail:send'], '*/15 * * * *': ['reminders:queue', 'briefings:seal'] },
     serverAssets: [],
+    // PDF fonts are read from their package, so the built server needs these files beside it.
+    externals: { traceInclude: ['package.json', 'ttf/DejaVuSansCondensed.ttf', 'ttf/DejaVuSansCondensed-Bold.ttf', 'ttf/DejaVuSansMono.ttf'].map(file => resolve('node_modules/dejavu-fonts-ttf', file)) },
     typescript: { tsConfig: { include: [resolve('./migrations'), resolve('./seeds')] } },
   },
   typescript: { strict: true, typeCheck: false },
