@@ -48,7 +48,6 @@ export default defineNuxtConfig({
     defaultLocale: 'en',
     locales: languages.map(({ code, ...rest }) => ({ code, ...rest, files: messageFiles.map(file => `${code}/${file}.json`) })),
     detectBrowserLanguage: { useCookie: true, cookieKey: 'language', fallbackLocale: 'en' },
-    bundle: { optimizeTranslationDirective: false },
   },
   content: {
     database: { type: 'sqlite', filename: ':memory:' },

@@ -1,4 +1,5 @@
 import type { Config } from 'tailwindcss'
+import plugin from 'tailwindcss/plugin'
 
 /** Named by material, used by meaning (see DEVELOPERS.md); the values for light and dark stand in assets/css/main.css. */
 const material = (name: string) => `rgb(var(--${name}) / <alpha-value>)`
@@ -31,5 +32,7 @@ export default {
       borderRadius: { DEFAULT: '3px' },
     },
   },
+  // `office:` styles what stands in the office shell (html.office), where a mouse is at hand.
+  plugins: [plugin(({ addVariant }) => addVariant('office', 'html.office &'))],
   corePlugins: { container: false },
 } satisfies Config

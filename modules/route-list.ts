@@ -1,6 +1,6 @@
 import { readdirSync } from 'node:fs'
 import { join, relative } from 'node:path'
-import { defineNuxtModule } from 'nuxt/kit'
+import { addTypeTemplate, defineNuxtModule } from 'nuxt/kit'
 
 /** `server/api/credentials/[id]/withdrawal.post.ts` → `POST /api/credentials/{id}/withdrawal`. */
 export function routeOfFile(file: string): { method: string, path: string } {
@@ -13,6 +13,10 @@ export function routeOfFile(file: string): { method: string, path: string } {
 export default defineNuxtModule({
   meta: { name: 'route-list' },
   setup(_options, nuxt) {
+    addTypeTemplate({
+      filename: 'types/route-list.d.ts',
+      getContents: () => 'declare module \'#route-list\' {\n  export const routeList: { method: string, path: string, load: () => Promise<unknown> }[]\n}\n',
+    }, { nuxt: true, nitro: true })
     const folder = join(nuxt.options.rootDir, 'server/api')
     nuxt.hook('nitro:config', (config) => {
       config.virtual ??= {}

@@ -1,6 +1,7 @@
 /** The routes that answer without a session, each with its reason. Everything else under `/api` asks for one. */
 export const publicRoutes = [
   { method: 'GET', path: '/api/health', why: 'monitoring asks without a person' },
+  { method: 'GET', path: '/api/server-notes', why: 'the demo banner stands on the sign-in page too' },
   { method: 'GET', path: '/api/openapi.json', why: 'integrators read the description before they have an account' },
   { method: 'GET', path: '/api/setup', why: 'an empty database has nobody who could sign in' },
   { method: 'POST', path: '/api/setup', why: 'an empty database has nobody who could sign in' },

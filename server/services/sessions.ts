@@ -1,6 +1,7 @@
 import { BetterSqlite3Adapter } from '@lucia-auth/adapter-sqlite'
 import { Lucia, TimeSpan, type DatabaseSession, type DatabaseUser } from 'lucia'
-import type { Actor, Role } from '#shared/access/abilities'
+import type { Actor } from '#shared/access/abilities'
+import type { Role } from '#shared/domain/states'
 import type { Db } from '../data/database'
 import type { Settings } from './settings'
 import { sha256 } from './hashing'

@@ -78,14 +78,16 @@ async function workOf<Who extends Actor | null>(event: H3Event, actor: Who): Pro
   }
 }
 
-async function run<Who extends Actor | null, Params, Query, Body>(event: H3Event, actor: Who, parts: RouteParts<Params, Query, Body>, handle: (given: Given<Who, Params, Query, Body>) => unknown) {
+type Handle<Who extends Actor | null, Params, Query, Body, Answer> = (given: Given<Who, Params, Query, Body>) => Answer | Promise<Answer>
+
+async function run<Who extends Actor | null, Params, Query, Body, Answer>(event: H3Event, actor: Who, parts: RouteParts<Params, Query, Body>, handle: Handle<Who, Params, Query, Body, Answer>): Promise<Answer> {
   try {
     const params = parseInput(parts.params, getRouterParams(event, { decode: true }))
     const query = parseInput(parts.query, getQuery(event))
     const body = parts.body ? parseInput(parts.body, await readJson(event)) : undefined as Body
     const answer = await handle({ work: await workOf(event, actor), params, query, body, event })
     if (parts.status) setResponseStatus(event, parts.status)
-    return parts.status === 204 ? null : answer
+    return parts.status === 204 ? null as Answer : answer
   }
   catch (error) {
     if (!(error instanceof Refusal)) throw error
@@ -98,8 +100,8 @@ async function run<Who extends Actor | null, Params, Query, Body>(event: H3Event
  * An API route for somebody signed in: who (session), may they at all (ability), what (schemas), then `handle`
  * does it in one call and answers a named view. Whose records it reaches is the service's to check (404).
  */
-export function defineRoute<Params = undefined, Query = undefined, Body = undefined>(parts: RouteParts<Params, Query, Body> & { ability: Ability }, handle: (given: Given<Actor, Params, Query, Body>) => unknown) {
-  const handler = defineEventHandler((event) => {
+export function defineRoute<Params = undefined, Query = undefined, Body = undefined, Answer = unknown>(parts: RouteParts<Params, Query, Body> & { ability: Ability }, handle: Handle<Actor, Params, Query, Body, Answer>) {
+  const handler = defineEventHandler((event): Promise<Answer> => {
     const { actor } = event.context
     if (!actor) throw toHttpError(new Refusal('notSignedIn', 'notSignedIn', { message: 'Sign in first' }))
     if (!can(actor, parts.ability)) throw toHttpError(new Refusal('forbidden', 'forbidden', { message: 'Your role may not do this' }))
@@ -109,7 +111,7 @@ export function defineRoute<Params = undefined, Query = undefined, Body = undefi
 }
 
 /** An API route that answers without a session; it must stand on the public list (`server/services/public-routes.ts`). */
-export function definePublicRoute<Params = undefined, Query = undefined, Body = undefined>(parts: RouteParts<Params, Query, Body>, handle: (given: Given<Actor | null, Params, Query, Body>) => unknown) {
-  const handler = defineEventHandler(event => run(event, event.context.actor, parts, handle))
+export function definePublicRoute<Params = undefined, Query = undefined, Body = undefined, Answer = unknown>(parts: RouteParts<Params, Query, Body>, handle: Handle<Actor | null, Params, Query, Body, Answer>) {
+  const handler = defineEventHandler((event): Promise<Answer> => run(event, event.context.actor, parts, handle))
   return Object.assign(handler, { parts: { ...parts, ability: 'public' as const } })
 }
