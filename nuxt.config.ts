@@ -9,15 +9,11 @@ const messageFiles = ['common', 'sign-in', 'people', 'learn', 'briefing', 'crede
 
 export default defineNuxtConfig({
   modules: ['@nuxt/eslint', '@pinia/nuxt', '@nuxtjs/tailwindcss', '@nuxtjs/i18n', '@nuxt/content', 'nuxt-security', './modules/route-list'],
-  srcDir: '.',
-  compatibilityDate: '2026-01-01',
-  devtools: { enabled: false },
-  telemetry: false,
-  css: ['~/assets/css/main.css'],
   components: [
     { path: '~/components/content', global: true, pathPrefix: false },
     { path: '~/components' },
   ],
+  devtools: { enabled: false },
   app: {
     head: {
       titleTemplate: '%s · Pourwright',
@@ -28,6 +24,13 @@ export default defineNuxtConfig({
       ],
       link: [{ rel: 'icon', type: 'image/svg+xml', href: '/icon.svg' }],
     },
+  },
+  css: ['~/assets/css/main.css'],
+  content: {
+    database: { type: 'sqlite', filename: ':memory:' },
+    experimental: { sqliteConnector: 'better-sqlite3' },
+    build: { markdown: { highlight: false, toc: { depth: 2 } } },
+    renderer: { anchorLinks: false },
   },
   /** Each can be set by an environment variable: `NUXT_DATABASE_PATH`, `NUXT_CLOCK`, and so on; the README has the table. */
   runtimeConfig: {
@@ -43,19 +46,34 @@ export default defineNuxtConfig({
     mailFrom: 'Pourwright <pourwright@localhost>',
     setupToken: '',
   },
+  srcDir: '.',
+  compatibilityDate: '2026-01-01',
+  nitro: {
+    compressPublicAssets: true,
+    experimental: { tasks: true },
+    scheduledTasks: { '* * * * *': ['mail:send'], '*/15 * * * *': ['reminders:queue', 'briefings:seal'] },
+    serverAssets: [],
+    // PDF fonts are read from their package, so the built server needs these files beside it.
+    externals: { traceInclude: ['package.json', 'ttf/DejaVuSansCondensed.ttf', 'ttf/DejaVuSansCondensed-Bold.ttf', 'ttf/DejaVuSansMono.ttf'].map(file => resolve('node_modules/dejavu-fonts-ttf', file)) },
+    typescript: { tsConfig: { include: [resolve('./migrations'), resolve('./seeds')] } },
+  },
+  typescript: { strict: true, typeCheck: false },
+  telemetry: false,
+  hooks: {
+    // Content writes every collection into a public dump; nothing of it may be prerendered or served (see server/middleware/0.content-gate.ts).
+    'nitro:config': (config) => {
+      for (const [path, rules] of Object.entries(config.routeRules ?? {})) {
+        if (path.includes('__nuxt_content')) rules.prerender = false
+      }
+    },
+  },
+  eslint: { config: { stylistic: true } },
   i18n: {
     strategy: 'no_prefix',
     defaultLocale: 'en',
     locales: languages.map(({ code, ...rest }) => ({ code, ...rest, files: messageFiles.map(file => `${code}/${file}.json`) })),
     detectBrowserLanguage: { useCookie: true, cookieKey: 'language', fallbackLocale: 'en' },
   },
-  content: {
-    database: { type: 'sqlite', filename: ':memory:' },
-    experimental: { sqliteConnector: 'better-sqlite3' },
-    build: { markdown: { highlight: false, toc: { depth: 2 } } },
-    renderer: { anchorLinks: false },
-  },
-  tailwindcss: { viewer: false, cssPath: false },
   security: {
     rateLimiter: false,
     xssValidator: false,
@@ -82,23 +100,5 @@ export default defineNuxtConfig({
       },
     },
   },
-  nitro: {
-    compressPublicAssets: true,
-    experimental: { tasks: true },
-    scheduledTasks: { '* * * * *': ['mail:send'], '*/15 * * * *': ['reminders:queue', 'briefings:seal'] },
-    serverAssets: [],
-    // PDF fonts are read from their package, so the built server needs these files beside it.
-    externals: { traceInclude: ['package.json', 'ttf/DejaVuSansCondensed.ttf', 'ttf/DejaVuSansCondensed-Bold.ttf', 'ttf/DejaVuSansMono.ttf'].map(file => resolve('node_modules/dejavu-fonts-ttf', file)) },
-    typescript: { tsConfig: { include: [resolve('./migrations'), resolve('./seeds')] } },
-  },
-  typescript: { strict: true, typeCheck: false },
-  eslint: { config: { stylistic: true } },
-  hooks: {
-    // Content writes every collection into a public dump; nothing of it may be prerendered or served (see server/middleware/0.content-gate.ts).
-    'nitro:config': (config) => {
-      for (const [path, rules] of Object.entries(config.routeRules ?? {})) {
-        if (path.includes('__nuxt_content')) rules.prerender = false
-      }
-    },
-  },
+  tailwindcss: { viewer: false, cssPath: false },
 })

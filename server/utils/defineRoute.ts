@@ -1,5 +1,5 @@
 import type { H3Event } from 'h3'
-import { z } from 'zod'
+import type { z } from 'zod'
 import { can, type Ability, type Actor } from '#shared/access/abilities'
 import { dateInZone } from '#shared/domain/dates'
 import { getCompany } from '../data/company'
