@@ -13,10 +13,9 @@ describe('drawing an attempt', () => {
     expect(drawAttempt(bank, 'seed')).toEqual(drawAttempt({ ...bank, items: [...bank.items].reverse() }, 'seed'))
   })
 
-  it('gives the order it always gave for a stored seed', () => {
-    const bank = aBank({ items: [aOne({ id: 'a' }), aOne({ id: 'b' }), aOne({ id: 'c' })], quizLength: 3 })
-    expect(drawAttempt(bank, 'stored')).toEqual(drawAttempt(bank, 'stored'))
-    expect(new Set(['s1', 's2', 's3', 's4', 's5', 's6', 's7', 's8'].map(seed => ids(drawAttempt(bank, seed)).join())).size).toBeGreaterThan(2)
+  it('gives another attempt for another seed', () => {
+    const attempts = Array.from({ length: 40 }, (_, index) => ids(drawAttempt(aBank(), `seed ${index}`)).join())
+    expect(new Set(attempts).size).toBe(40)
   })
 
   it('does not change the bank', () => {
@@ -86,7 +85,7 @@ describe('the options of a drawn item', () => {
 describe('numbers from a seed', () => {
   it('are the same on every machine', () => {
     const next = numbersFrom('pourwright')
-    expect(Array.from({ length: 8 }, () => next(100))).toEqual(FIRST_EIGHT)
+    expect(Array.from({ length: 8 }, () => next(100))).toEqual([35, 86, 18, 52, 10, 21, 93, 2])
   })
 
   it('lie below the bound and reach every value', () => {

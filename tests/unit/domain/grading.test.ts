@@ -125,7 +125,7 @@ describe('what a learner is served', () => {
 
   it('holds no key, feedback, source, lesson or must-know mark', () => {
     for (const item of aBank().items) {
-      const served = toServedItem({ ...item, secret: 'x' } as BankItem, 'en')
+      const served = toServedItem(Object.assign({ notes: 'Feedback' }, item), 'en')
       const extra = keys(served).filter(key => !['id', 'kind', 'options', 'picture', 'stem', 'unit', 'units'].includes(key))
       expect(extra).toEqual([])
       expect((served.options ?? []).flatMap(keys).filter(key => key !== 'id' && key !== 'text')).toEqual([])
