@@ -20,10 +20,12 @@ export function auditHash(row: { seq: number, at: string, actorId: string | null
 }
 
 /**
- * Appends one row to the audit chain; call it inside the transaction of the change that it records.
+ * Appends one row to the audit chain; call it inside the transaction of the change that it records. Without one it
+ * opens its own, so that nobody can append between its reading of the last row and its writing of the next.
  * The details stand in a table of their own, so that they can be erased without breaking the chain over their digests.
  */
 export async function appendAudit(db: Db, entry: AuditEntry): Promise<void> {
+  if (!db.isTransaction) return db.transaction(trx => appendAudit(trx, entry))
   const last = await db('audit').orderBy('seq', 'desc').first('seq', 'hash')
   const details = JSON.stringify({ before: entry.before ?? null, after: entry.after ?? null })
   const row = {

@@ -11,6 +11,8 @@ export interface Settings {
   isDemo: boolean
   /** The address people use, without a slash at the end; empty: taken from each request. */
   origin: string
+  /** Where links in mail lead: `origin`, or the address this process listens on. Never taken from a request, which could name any host. */
+  linkOrigin: string
   hasTls: boolean
   smtpUrl: string
   mailFrom: string
@@ -18,6 +20,13 @@ export interface Settings {
 }
 
 type Raw = Record<'databasePath' | 'filesPath' | 'signingKeyPath' | 'signingKey' | 'clock' | 'demo' | 'origin' | 'tls' | 'smtpUrl' | 'mailFrom' | 'setupToken', unknown>
+
+/** `http://host:port` as the server was told to listen; localhost when it listens everywhere. */
+function listeningOrigin(): string {
+  const host = process.env.NITRO_HOST || process.env.HOST || ''
+  const isEverywhere = ['', '0.0.0.0', '::', '[::]'].includes(host)
+  return `http://${isEverywhere ? 'localhost' : host}:${process.env.NITRO_PORT || process.env.PORT || 3000}`
+}
 
 const isOn = (value: unknown) => value === true || value === 1 || ['true', '1', 'yes', 'on'].includes(String(value).toLowerCase())
 
@@ -34,6 +43,7 @@ export function toSettings(raw: Raw): Settings {
     clock: createClock(text('clock')),
     isDemo: isOn(raw.demo),
     origin: text('origin').replace(/\/+$/, ''),
+    linkOrigin: text('origin').replace(/\/+$/, '') || listeningOrigin(),
     hasTls: isOn(raw.tls),
     smtpUrl: text('smtpUrl'),
     mailFrom: text('mailFrom'),
