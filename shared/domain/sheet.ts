@@ -1,0 +1,146 @@
+import canonicalize from 'canonicalize'
+import type { CalendarDate, Instant } from './dates'
+import type { HandReason, Language, MarkKind, SignInMethod, WorkTag } from './states'
+
+/** One line of a sheet: a person or a visitor, and their mark. */
+export interface SheetLine {
+  name: string
+  employer: string
+  trade: string | null
+  personId: string | null
+  /** Whom a visitor came to see. */
+  host: string | null
+  method: SignInMethod
+  reason: HandReason | null
+  markKind: MarkKind
+  /** Typed text, drawn strokes as JSON text, or the witness's name; null for a tap. */
+  mark: string | null
+  language: Language
+  signedAt: Instant
+  /** After the talk was over: briefed by the one who runs the briefing. */
+  isLate: boolean
+  isWithoutSignal: boolean
+  enteredBy: string | null
+  explainedBy: string | null
+}
+
+/** A morning check by the competent person, and what was mended. */
+export interface SheetCheck {
+  subject: string
+  found: string
+  mended: string | null
+  checkedBy: string
+}
+
+/** Something to put right, with who and by when. */
+export interface CorrectiveAction {
+  what: string
+  owner: string
+  dueOn: CalendarDate | null
+}
+
+/** The sealed record of a briefing: the union of what the published rules ask a sign-in sheet to hold. */
+export interface BriefingSheet {
+  kind: 'sheet'
+  version: 1
+  briefingId: string
+  siteId: string
+  siteCode: string
+  siteName: string
+  date: CalendarDate
+  openedAt: Instant
+  closedAt: Instant
+  sealedAt: Instant
+  talk: { slug: string, title: string, versions: Partial<Record<Language, string>>, sources: string[] }
+  speaker: { name: string, title: string, company: string, markKind: MarkKind, mark: string | null }
+  interpreter: string | null
+  work: WorkTag[]
+  weather: string | null
+  notes: string | null
+  questions: string[]
+  actions: CorrectiveAction[]
+  checks: SheetCheck[]
+  lines: SheetLine[]
+  /** Expected people who were not there, and when they made it up. */
+  absent: { name: string, personId: string, madeUpOn: CalendarDate | null }[]
+  isWithoutSignal: boolean
+  /** Sealed at the end of the site's day because nobody did it before. */
+  isSealedByDayEnd: boolean
+  /** The server's clock was set by hand. */
+  isClockSet: boolean
+}
+
+/** A correction or a late line after the seal: a sheet of the same chain that points at the one it adds to. */
+export interface SheetAddendum {
+  kind: 'addendum'
+  version: 1
+  /** Hash of the sheet that it adds to. */
+  addsTo: string
+  siteId: string
+  writtenBy: string
+  writtenAt: Instant
+  text: string
+  lines: SheetLine[]
+  isClockSet: boolean
+}
+
+/** What a chain link is made of. The first sheet of a site has no previous hash. */
+export interface ChainLink {
+  previousHash: string | null
+  sheet: unknown
+}
+
+/** SHA-256 of a text as UTF-8, in lower-case hex. */
+export type Sha256Hex = (text: string) => string
+
+/**
+ * The RFC 8785 canonical JSON of a sheet or of any other JSON value. Fields that are undefined are left out.
+ * Throws a TypeError that names the place for what JSON cannot hold exactly: lone surrogates, numbers that are
+ * not finite, big integers, functions, symbols, undefined in a list or alone, and objects that are not plain.
+ */
+export function canonicalSheet(sheet: unknown): string {
+  refuseWhatJsonCannotHold(sheet, '$')
+  return canonicalize(sheet) ?? ''
+}
+
+/** The text that is hashed for a link: the canonical form of `{ previousHash, sheet }`. */
+export function hashInput({ previousHash, sheet }: ChainLink): string {
+  return canonicalSheet({ previousHash, sheet })
+}
+
+/**
+ * The index of the first link that does not hold, from the first sheet on, or null when all do: its hash is not
+ * that of its content, or it does not point at the one before. A tail cut off cannot be seen from the chain alone.
+ */
+export function firstBrokenLink(chain: readonly (ChainLink & { hash: string })[], sha256: Sha256Hex): number | null {
+  const broken = chain.findIndex((link, index) => {
+    const before = chain[index - 1]?.hash ?? null
+    return link.previousHash !== before || link.hash !== sha256(hashInput(link))
+  })
+  return broken === -1 ? null : broken
+}
+
+function refuseWhatJsonCannotHold(value: unknown, place: string): void {
+  if (value === null || typeof value === 'boolean') return
+  if (typeof value === 'string') return refuseLoneSurrogates(value, place)
+  if (typeof value === 'number') {
+    if (!Number.isFinite(value)) throw new TypeError(`Not a finite number at ${place}`)
+    return
+  }
+  if (Array.isArray(value)) return Array.from(value).forEach((item, index) => refuseWhatJsonCannotHold(item, `${place}[${index}]`))
+  if (!isPlainObject(value)) throw new TypeError(`JSON cannot hold what is at ${place}`)
+  for (const [key, field] of Object.entries(value)) {
+    refuseLoneSurrogates(key, place)
+    if (field !== undefined) refuseWhatJsonCannotHold(field, `${place}.${key}`)
+  }
+}
+
+function refuseLoneSurrogates(text: string, place: string): void {
+  if (/\p{Surrogate}/u.test(text)) throw new TypeError(`Half a character (lone surrogate) at ${place}`)
+}
+
+function isPlainObject(value: unknown): value is Record<string, unknown> {
+  if (typeof value !== 'object' || value === null) return false
+  const prototype: unknown = Object.getPrototypeOf(value)
+  return prototype === Object.prototype || prototype === null
+}
