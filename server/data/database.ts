@@ -1,7 +1,7 @@
 import { mkdirSync } from 'node:fs'
 import { dirname } from 'node:path'
 import knex, { type Knex } from 'knex'
-import { knexConfigFor } from './knex-config'
+import { knexConfigFor, renamePlucked } from './knex-config'
 import { migrationSource } from './migrations'
 
 /** A database handle or an open transaction: data functions take either, always first. */
@@ -11,6 +11,7 @@ export type Db = Knex
 export async function openDatabase(filename: string): Promise<Db> {
   if (filename !== ':memory:') mkdirSync(dirname(filename), { recursive: true })
   const db = knex({ ...knexConfigFor(filename), migrations: { migrationSource } })
+  renamePlucked(db)
   await db.migrate.latest()
   return db
 }

@@ -39,3 +39,12 @@ export function knexConfigFor(filename: string): Knex.Config {
     postProcessResponse: (result: unknown) => (Array.isArray(result) ? result.map(camelRow) : camelRow(result)),
   }
 }
+
+/** Knex plucks from the raw row, before names are renamed: `pluck('siteId')` has to look for `site_id`. */
+export function renamePlucked(db: Knex): void {
+  const processResponse = db.client.processResponse as (query: { pluck?: string }, runner: unknown) => unknown
+  db.client.processResponse = function (query: { pluck?: string }, runner: unknown) {
+    if (query?.pluck) query.pluck = toSnake(query.pluck)
+    return processResponse.call(this, query, runner)
+  }
+}
