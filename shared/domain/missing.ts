@@ -13,16 +13,16 @@ export interface Why {
 }
 
 /** The nearest thing that would mend it. Minutes are null when they are not known. */
-export type Fix =
-  | { kind: 'verify', type: string, credentialId: string }
-  | { kind: 'signOff', module: string, minutes: number | null }
-  | { kind: 'module', module: string, minutes: number | null }
-  | { kind: 'orientation', type: string, siteId: string | null }
-  | { kind: 'card', type: string }
-  | { kind: 'wait', type: string, on: CalendarDate }
-  | { kind: 'safetyManager' }
-  | { kind: 'office' }
-  | { kind: 'none' }
+export type Fix
+  = | { kind: 'verify', type: string, credentialId: string }
+    | { kind: 'signOff', module: string, minutes: number | null }
+    | { kind: 'module', module: string, minutes: number | null }
+    | { kind: 'orientation', type: string, siteId: string | null }
+    | { kind: 'card', type: string }
+    | { kind: 'wait', type: string, on: CalendarDate }
+    | { kind: 'safetyManager' }
+    | { kind: 'office' }
+    | { kind: 'none' }
 
 /** One thing that stands between a person and a duty. `anyOf` is empty when it concerns the person, not a rule's group. */
 export interface Missing {

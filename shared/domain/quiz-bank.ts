@@ -29,12 +29,12 @@ interface ItemBase {
 }
 
 /** One question with its key. It lives on the server; `toServedItem` makes what may leave it. */
-export type BankItem =
-  | (ItemBase & { kind: 'one', options: readonly ItemOption[], key: string })
-  | (ItemBase & { kind: 'place', options: readonly ItemOption[], key: string })
-  | (ItemBase & { kind: 'all', options: readonly ItemOption[], key: readonly string[] })
-  | (ItemBase & { kind: 'order', options: readonly ItemOption[], key: readonly string[] })
-  | (ItemBase & { kind: 'number', unit: Unit, units?: readonly Unit[], key: NumberKey })
+export type BankItem
+  = | (ItemBase & { kind: 'one', options: readonly ItemOption[], key: string })
+    | (ItemBase & { kind: 'place', options: readonly ItemOption[], key: string })
+    | (ItemBase & { kind: 'all', options: readonly ItemOption[], key: readonly string[] })
+    | (ItemBase & { kind: 'order', options: readonly ItemOption[], key: readonly string[] })
+    | (ItemBase & { kind: 'number', unit: Unit, units?: readonly Unit[], key: NumberKey })
 
 /** A module's questions, as its file holds them. */
 export interface QuizBank {

@@ -9,15 +9,15 @@ export interface FinishedAttempt {
 }
 
 /** Whether the quiz can be taken now. */
-export type QuizOpening =
-  | { isOpen: true }
-  | {
-    isOpen: false
-    /** The soonest that it can open: the pause after the last fail. It may have come already while lessons are still to be read. */
-    opensAt: Instant
-    /** Slugs of the lessons to read again first, in the order missed. */
-    lessonsToRead: string[]
-  }
+export type QuizOpening
+  = | { isOpen: true }
+    | {
+      isOpen: false
+      /** The soonest that it can open: the pause after the last fail. It may have come already while lessons are still to be read. */
+      opensAt: Instant
+      /** Slugs of the lessons to read again first, in the order missed. */
+      lessonsToRead: string[]
+    }
 
 /** What the opening depends on. */
 export interface QuizOpeningQuestion {

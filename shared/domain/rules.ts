@@ -1,9 +1,9 @@
 /** What a rule belongs to: everybody, a duty (by code), a site (by id), or a duty at a site. */
-export type RuleScope =
-  | { everybody: true }
-  | { duty: string, site?: undefined }
-  | { site: string, duty?: undefined }
-  | { duty: string, site: string }
+export type RuleScope
+  = | { everybody: true }
+    | { duty: string, site?: undefined }
+    | { site: string, duty?: undefined }
+    | { duty: string, site: string }
 
 /** What somebody asks for: every group must be met, and any one credential type inside a group meets it. */
 export interface Rule {

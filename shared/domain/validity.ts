@@ -2,10 +2,10 @@ import { addDays, addMonths, type CalendarDate, daysBetween, endOfMonth, isCalen
 import type { CredentialState, ValidityAnchor, ValidityBasis, Verification } from './states'
 
 /** How long a credential of a type lasts. A period without an anchor runs to the same day of the month. */
-export type Validity =
-  | { kind: 'never' }
-  | { kind: 'period', months: number, anchor?: ValidityAnchor }
-  | { kind: 'printed' }
+export type Validity
+  = | { kind: 'never' }
+    | { kind: 'period', months: number, anchor?: ValidityAnchor }
+    | { kind: 'printed' }
 
 /** What the rules need to know of a credential type; the stored type has its names and its source beside this. */
 export interface CredentialType {
