@@ -1,0 +1,62 @@
+import type { Language } from '#shared/domain/states'
+import type { CredentialItem } from '#shared/schemas/credentials'
+
+interface ReminderWords {
+  subject: (expired: number, ahead: number) => string
+  hello: (name: string) => string
+  own: string
+  others: string
+  expired: string
+  ahead: string
+  line: (item: { credential: string, date: string, days: number }) => string
+  whatToDo: string
+  seeAll: string
+}
+
+const words: Record<Language, ReminderWords> = {
+  en: {
+    subject: (expired, ahead) => [expired && `${expired} expired`, ahead && `${ahead} expiring soon`].filter(Boolean).join(', ').replace(/^/, 'Credentials: '),
+    hello: name => `${name},`,
+    own: 'These are yours.',
+    others: 'These are in your charge.',
+    expired: 'Expired',
+    ahead: 'Expiring soon',
+    line: ({ credential, date, days }) => `${credential}: ${date} (${days < 0 ? `${-days} ${days === -1 ? 'day' : 'days'} ago` : days === 0 ? 'today' : `${days} ${days === 1 ? 'day' : 'days'} left`})`,
+    whatToDo: 'Book the renewal now. When you have the new card, add it with a photo.',
+    seeAll: 'See them all:',
+  },
+  es: {
+    subject: (expired, ahead) => [expired && `${expired} vencidas`, ahead && `${ahead} por vencer`].filter(Boolean).join(', ').replace(/^/, 'Credenciales: '),
+    hello: name => `${name}:`,
+    own: 'Estas son suyas.',
+    others: 'Estas están a su cargo.',
+    expired: 'Vencidas',
+    ahead: 'Por vencer',
+    line: ({ credential, date, days }) => `${credential}: ${date} (${days < 0 ? `hace ${-days} ${days === -1 ? 'día' : 'días'}` : days === 0 ? 'hoy' : days === 1 ? 'queda 1 día' : `quedan ${days} días`})`,
+    whatToDo: 'Programe la renovación ahora. Cuando tenga la tarjeta nueva, agréguela con una foto.',
+    seeAll: 'Véalas todas:',
+  },
+}
+
+function dateText(date: string, language: Language): string {
+  return new Intl.DateTimeFormat(language === 'es' ? 'es-US' : 'en-US', { weekday: 'short', month: 'short', day: 'numeric', year: 'numeric', timeZone: 'UTC' }).format(new Date(`${date}T12:00:00Z`))
+}
+
+export interface Reminder { recipient: { personId: string, name: string, language: Language }, items: CredentialItem[], origin: string }
+
+/** One plain-text digest: what expired first, then what expires next, own ones without a name in front. */
+export function reminderMail({ recipient, items, origin }: Reminder): { subject: string, body: string } {
+  const { language, personId } = recipient
+  const said = words[language]
+  const isOwn = items.every(item => item.personId === personId)
+  const sorted = [...items].sort((a, b) => a.expiresOn! < b.expiresOn! ? -1 : 1)
+  const lineOf = (item: CredentialItem) => `- ${isOwn ? '' : `${item.sortName}: `}${said.line({ credential: item.typeName[language], date: dateText(item.expiresOn!, language), days: item.daysLeft! })}`
+  const part = (title: string, part: CredentialItem[]) => part.length === 0 ? [] : [`${title} (${part.length})`, ...part.map(lineOf), '']
+  const expired = sorted.filter(item => item.daysLeft! < 0)
+  const ahead = sorted.filter(item => item.daysLeft! >= 0)
+  const link = origin ? [`${said.seeAll} ${origin}${isOwn ? '/my-cards' : '/credentials?within=60&includeExpired=true'}`] : []
+  return {
+    subject: said.subject(expired.length, ahead.length),
+    body: [said.hello(recipient.name), '', isOwn ? said.own : said.others, '', ...part(said.expired, expired), ...part(said.ahead, ahead), said.whatToDo, ...link].join('\n'),
+  }
+}
