@@ -1,0 +1,34 @@
+import { queryCollection } from '@nuxt/content/server'
+import type { H3Event } from 'h3'
+import { parse } from 'yaml'
+import type { QuizBank } from '#shared/domain/quiz-bank'
+import { toBank, toTeaching, type Teaching } from '../services/teaching'
+
+let loaded: Promise<Teaching> | undefined
+
+async function readBanks(): Promise<QuizBank[]> {
+  const storage = useStorage('assets:server')
+  const names = await storage.getKeys('quizzes')
+  return Promise.all(names.map(async name => toBank(parse(String(await storage.getItem(name))))))
+}
+
+async function load(event: H3Event): Promise<Teaching> {
+  const [modulesEn, modulesEs, lessonsEn, lessonsEs, banks] = await Promise.all([
+    queryCollection(event, 'modulesEn').select('path', 'summary', 'cautions', 'checklist', 'sources').all(),
+    queryCollection(event, 'modulesEs').select('path', 'summary', 'cautions', 'checklist', 'sources').all(),
+    queryCollection(event, 'lessonsEn').select('path', 'title', 'minutes', 'order').all(),
+    queryCollection(event, 'lessonsEs').select('path', 'title', 'minutes', 'order').all(),
+    readBanks(),
+  ])
+  return toTeaching({ modules: { en: modulesEn, es: modulesEs }, lessons: { en: lessonsEn, es: lessonsEs }, banks })
+}
+
+/** Every written module with its bank: read once, and again at each request while developing. Throws when a bank is not sound. */
+export function getTeaching(event: H3Event): Promise<Teaching> {
+  if (import.meta.dev) return load(event)
+  loaded ??= load(event).catch((error: unknown) => {
+    loaded = undefined
+    throw error
+  })
+  return loaded
+}
