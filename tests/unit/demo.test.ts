@@ -1,0 +1,159 @@
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
+import { addDays, addMonths, dateInZone } from '#shared/domain/dates'
+import { seedDemoCompany } from '~~/seeds/demo'
+import { seedReference } from '~~/seeds/reference'
+import { checkAuditChain } from '~~/server/data/audit'
+import { type Db, openDatabase } from '~~/server/data/database'
+import { isRightSecret } from '~~/server/services/passwords'
+import { toSettings } from '~~/server/services/settings'
+import { loadEffective } from '../support/demo-credentials'
+
+async function seededAt(clock: string): Promise<Db> {
+  const settings = toSettings({ databasePath: ':memory:', clock, demo: true, filesPath: '', signingKeyPath: '', signingKey: '', origin: '', tls: false, smtpUrl: '', mailFrom: '', setupToken: '' })
+  const db = await openDatabase(':memory:')
+  await seedReference(db, settings.clock.now())
+  await seedDemoCompany(db, settings)
+  return db
+}
+
+const clocks = ['2026-12-01T13:30:00Z', '2026-12-31T23:59:00Z', '2027-01-01T06:59:59Z', '2028-02-29T15:00:00Z', '2028-03-03T15:00:00Z', '2027-03-14T12:00:00Z', '2026-08-15T03:00:00Z']
+
+describe.each(clocks)('the demo company at %s', (clock) => {
+  let db: Db
+  const today = dateInZone(clock, 'America/Denver')
+  beforeAll(async () => {
+    db = await seededAt(clock)
+  })
+  afterAll(() => db.destroy())
+
+  it('has 4 sites in two zones, 6 crews and about 60 people', async () => {
+    expect(await db('sites').orderBy('position').pluck('timeZone')).toEqual(['America/Denver', 'America/Denver', 'America/Chicago', 'America/Chicago'])
+    expect(await db('crews').pluck('id')).toHaveLength(6)
+    const people = await db('people').select('leftOn', 'hiredOn')
+    expect(people.length).toBeGreaterThanOrEqual(55)
+    expect(people.length).toBeLessThanOrEqual(65)
+  })
+
+  it('has foreman, installer and new hire at the first site today', async () => {
+    const first = await db('sites').orderBy('position').first('id')
+    const there = await db('people').join('assignments', 'assignments.crewId', 'people.crewId')
+      .where({ siteId: first.id }).where('startsOn', '<=', today).where(query => query.whereNull('endsOn').orWhere('endsOn', '>=', today)).pluck('badge')
+    expect(there).toEqual(expect.arrayContaining(['1011', '1037', '2041']))
+  })
+
+  it('rosters nobody at two sites on one day', async () => {
+    const stays = await db('assignments').select('crewId', 'personId', 'startsOn', 'endsOn')
+    for (const [index, stay] of stays.entries()) {
+      const clash = stays.slice(index + 1).find(other => other.crewId === stay.crewId && other.personId === stay.personId
+        && other.startsOn <= (stay.endsOn ?? '9999') && stay.startsOn <= (other.endsOn ?? '9999'))
+      expect(clash).toBeUndefined()
+    }
+  })
+
+  it('has 20 to 25 credentials due within 60 days and about 6 expired', async () => {
+    const effective = await loadEffective(db, today)
+    const count = (state: string) => effective.filter(one => one.state === state).length
+    expect(count('dueSoon')).toBeGreaterThanOrEqual(20)
+    expect(count('dueSoon')).toBeLessThanOrEqual(25)
+    expect(count('expired')).toBe(6)
+    expect(count('unverified')).toBe(4)
+    expect(count('withdrawn')).toBe(1)
+    expect(count('rejected')).toBe(1)
+    expect(count('notYet')).toBe(1)
+  })
+
+  it('dates nothing before the hire and nothing but the booked class after today', async () => {
+    const rows = await db('credentials').join('people', 'people.id', 'credentials.personId').join('credentialTypes', 'credentialTypes.id', 'credentials.typeId')
+      .select('credentialTypes.code', 'issuedOn', 'hiredOn', 'people.name', 'credentials.createdAt')
+    const early = rows.filter(row => row.issuedOn < row.hiredOn && !['first-aid-cpr', 'outreach-card', 'fall-protection'].includes(row.code))
+    expect(early).toEqual([])
+    expect(rows.filter(row => row.issuedOn > today).map(row => row.code)).toEqual(['scaffold-erector'])
+    expect(rows.filter(row => row.createdAt > clock)).toEqual([])
+  })
+
+  it('gives every current worker hazard communication and the orientation of their site', async () => {
+    const workers = await db('people').join('assignments', query => query.on('assignments.crewId', 'people.crewId').orOn('assignments.personId', 'people.id'))
+      .where('hiredOn', '<=', today).whereNull('leftOn').where('startsOn', '<=', today).where(query => query.whereNull('endsOn').orWhere('endsOn', '>=', today))
+      .select('people.id', 'people.name', 'assignments.siteId')
+    expect(workers.length).toBeGreaterThan(45)
+    const held = await db('credentials').join('credentialTypes', 'credentialTypes.id', 'credentials.typeId').select('personId', 'code', 'siteId')
+    const without = workers.filter(worker => !held.some(one => one.personId === worker.id && one.code === 'hazard-communication')
+      || !held.some(one => one.personId === worker.id && one.code === 'site-orientation' && one.siteId === worker.siteId))
+    expect(without).toEqual([])
+  })
+
+  it('lets the new hire hold hazard communication and the orientation only', async () => {
+    const codes = await db('credentials').join('credentialTypes', 'credentialTypes.id', 'credentials.typeId')
+      .join('people', 'people.id', 'credentials.personId').where({ badge: '2041' }).pluck('code')
+    expect(codes.sort()).toEqual(['hazard-communication', 'site-orientation'])
+  })
+
+  it('lets somebody\'s pump and hose run out three days ago, so that the pour crew is short', async () => {
+    const effective = await loadEffective(db, today)
+    const crew = await db('crews').where({ name: 'Pour crew' }).first('id')
+    const members = new Set(await db('people').where({ crewId: crew.id }).pluck('id'))
+    const hose = effective.filter(one => one.type === 'pump-and-hose' && members.has(one.personId))
+    const expired = hose.filter(one => one.state === 'expired')
+    expect(expired).toHaveLength(1)
+    // A yearly interval can't end on 29 February of a leap year: it ends the day before.
+    expect([addDays(today, -3), addMonths(addMonths(addDays(today, -3), -12), 12)]).toContain(expired[0]?.expiresOn)
+    expect(hose.filter(one => one.state === 'inDate' || one.state === 'dueSoon')).toHaveLength(1)
+  })
+
+  it('asks everybody for hazard communication and each site for its orientation', async () => {
+    const rules = await db('rules').join('ruleTypes', 'ruleTypes.ruleId', 'rules.id').join('credentialTypes', 'credentialTypes.id', 'ruleTypes.typeId')
+      .whereNull('dutyId').select('siteId', 'code')
+    expect(rules.filter(rule => rule.siteId === null).map(rule => rule.code)).toEqual(['hazard-communication'])
+    expect(rules.filter(rule => rule.siteId !== null).map(rule => rule.code)).toEqual(Array(4).fill('site-orientation'))
+  })
+
+  it('keeps the audit chain whole and in order', async () => {
+    const checked = await checkAuditChain(db)
+    expect(checked).toMatchObject({ intact: true })
+    expect(checked.rows).toBeGreaterThan(500)
+    const times = await db('audit').orderBy('seq').pluck('at')
+    expect(times.filter(at => at > clock.replace('Z', '.999Z'))).toEqual([])
+    expect([...times].sort()).toEqual(times)
+  })
+})
+
+describe('the demo sign-ins', () => {
+  let db: Db
+  beforeAll(async () => {
+    db = await seededAt(clocks[0]!)
+  })
+  afterAll(() => db.destroy())
+
+  it.each(['safety', 'office', 'foreman', 'super', 'installer'])('lets %s in by the password, in English', async (mailbox) => {
+    const row = await db('people').join('signInSecrets', 'signInSecrets.personId', 'people.id').where({ email: `${mailbox}@cedarhollow.example` }).first()
+    expect(row.language).toBe('en')
+    expect(await isRightSecret(row.passwordHash, 'running-bond')).toBe(true)
+  })
+
+  it('lets the new hire in by badge and PIN, in Spanish', async () => {
+    const row = await db('people').join('signInSecrets', 'signInSecrets.personId', 'people.id').where({ badge: '2041' }).first()
+    expect(row.language).toBe('es')
+    expect(await isRightSecret(row.pinHash, '739416')).toBe(true)
+  })
+
+  it('gives everybody invented mail and phone, a badge of their own and a sort name', async () => {
+    const people = await db('people').select('email', 'phone', 'badge', 'sortName')
+    expect(people.every(one => one.email === null || one.email.endsWith('.example'))).toBe(true)
+    expect(people.every(one => /555-01\d\d$/.test(one.phone))).toBe(true)
+    expect(new Set(people.map(one => one.phone)).size).toBe(people.length)
+    expect(people.every(one => /^[^,]+, [^,]+$/.test(one.sortName))).toBe(true)
+  })
+
+  it('leaves a database with people as it was', async () => {
+    const before = await db('audit').count({ rows: '*' }).first()
+    await seedDemoCompany(db, toSettings({ databasePath: ':memory:', clock: clocks[0], demo: true, filesPath: '', signingKeyPath: '', signingKey: '', origin: '', tls: false, smtpUrl: '', mailFrom: '', setupToken: '' }))
+    expect(await db('audit').count({ rows: '*' }).first()).toEqual(before)
+  })
+
+  it('tells the same story at every seeding', async () => {
+    const again = await seededAt(clocks[0]!)
+    const story = (one: Db) => one('credentials').orderBy('id').select('id', 'personId', 'issuedOn', 'expiresOn', 'number', 'details')
+    expect(await story(again)).toEqual(await story(db))
+    await again.destroy()
+  })
+})
