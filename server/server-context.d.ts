@@ -8,6 +8,8 @@ declare module 'h3' {
     settings: Settings
     /** The signed-in person, or null. */
     actor: Actor | null
+    /** Replaces a route's usual status: a repeat of something that was made answers 200 instead of 201. */
+    answerStatus?: 200
   }
 }
 

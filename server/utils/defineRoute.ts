@@ -86,8 +86,9 @@ async function run<Who extends Actor | null, Params, Query, Body, Answer>(event:
     const query = parseInput(parts.query, getQuery(event))
     const body = parts.body ? parseInput(parts.body, await readJson(event)) : undefined as Body
     const answer = await handle({ work: await workOf(event, actor), params, query, body, event })
-    if (parts.status) setResponseStatus(event, parts.status)
-    return parts.status === 204 ? null as Answer : answer
+    const status = event.context.answerStatus ?? parts.status
+    if (status) setResponseStatus(event, status)
+    return status === 204 ? null as Answer : answer
   }
   catch (error) {
     if (!(error instanceof Refusal)) throw error

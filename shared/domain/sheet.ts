@@ -4,6 +4,7 @@ import type { HandReason, Language, MarkKind, SignInMethod, WorkTag } from './st
 
 /** One line of a sheet: a person or a visitor, and their mark. */
 export interface SheetLine {
+  id: string
   name: string
   employer: string
   trade: string | null
@@ -20,7 +21,13 @@ export interface SheetLine {
   /** After the talk was over: briefed by the one who runs the briefing. */
   isLate: boolean
   isWithoutSignal: boolean
+  /** A presence code shown at the talk was redeemed for it. */
+  hasCode: boolean
+  /** Who entered it, when it was not the person's own phone. */
   enteredBy: string | null
+  /** The check question where it was asked: never a bare wrong answer. */
+  check: 'right' | 'explainedAgain' | null
+  /** Who explained it again; null when the screen did. */
   explainedBy: string | null
 }
 
@@ -39,23 +46,37 @@ export interface CorrectiveAction {
   dueOn: CalendarDate | null
 }
 
-/** The sealed record of a briefing: the union of what the published rules ask a sign-in sheet to hold. */
-export interface BriefingSheet {
-  kind: 'sheet'
+/** What a sheet and an addendum both say about where they belong and how they were sealed. */
+interface SheetHead {
   version: 1
+  /** Place in the site's chain, from 1. */
+  number: number
+  company: string
   briefingId: string
   siteId: string
   siteCode: string
   siteName: string
+  timeZone: string
   date: CalendarDate
+  sealedAt: Instant
+  /** Who sealed it; null when the site's day ended first. */
+  sealedBy: string | null
+  /** The server's clock was set by hand. */
+  isClockSet: boolean
+}
+
+/** The sealed record of a briefing: the union of what the published rules ask a sign-in sheet to hold. */
+export interface BriefingSheet extends SheetHead {
+  kind: 'sheet'
+  siteAddress: string | null
   openedAt: Instant
   closedAt: Instant
-  sealedAt: Instant
-  talk: { slug: string, title: string, versions: Partial<Record<Language, string>>, sources: string[] }
+  talk: { slug: string, title: Record<Language, string>, versions: Record<Language, string>, sources: string[] }
   speaker: { name: string, title: string, company: string, markKind: MarkKind, mark: string | null }
   interpreter: string | null
   work: WorkTag[]
-  weather: string | null
+  /** As the foreman entered it, US customary units. */
+  weather: Readonly<Record<string, number | string>> | null
   notes: string | null
   questions: string[]
   actions: CorrectiveAction[]
@@ -66,22 +87,17 @@ export interface BriefingSheet {
   isWithoutSignal: boolean
   /** Sealed at the end of the site's day because nobody did it before. */
   isSealedByDayEnd: boolean
-  /** The server's clock was set by hand. */
-  isClockSet: boolean
 }
 
 /** A correction or a late line after the seal: a sheet of the same chain that points at the one it adds to. */
-export interface SheetAddendum {
+export interface SheetAddendum extends SheetHead {
   kind: 'addendum'
-  version: 1
   /** Hash of the sheet that it adds to. */
   addsTo: string
-  siteId: string
   writtenBy: string
   writtenAt: Instant
-  text: string
+  text: string | null
   lines: SheetLine[]
-  isClockSet: boolean
 }
 
 /** What a chain link is made of. The first sheet of a site has no previous hash. */

@@ -1,0 +1,32 @@
+import type { H3Event } from 'h3'
+import { queryCollection } from '@nuxt/content/server'
+import { parseChecks, toTalk, type Talk, type Talks, type TalkText } from '../services/talks'
+
+let reading: Promise<Talks> | undefined
+
+const slugOf = (path: string) => path.split('/').at(-1)!
+
+async function load(event: H3Event): Promise<Talks> {
+  const [english, spanish, yaml] = await Promise.all([
+    queryCollection(event, 'talksEn').all(), queryCollection(event, 'talksEs').all(), useStorage('assets:server').getItem<string>('talk-checks.yaml'),
+  ])
+  const checks = parseChecks(String(yaml))
+  const text = ({ title, minutes, work, hazards, seasons, sources, body }: TalkText): TalkText => ({ title, minutes, work, hazards, seasons, sources, body })
+  const talks = new Map<string, Talk>()
+  for (const page of english) {
+    const slug = slugOf(page.path)
+    const other = spanish.find(row => slugOf(row.path) === slug)
+    const check = checks.get(slug)
+    if (!other || !check) throw new Error(`The talk ${slug} lacks ${other ? 'its check question' : 'its Spanish text'}`)
+    talks.set(slug, toTalk(slug, { en: text(page), es: text(other) }, check))
+  }
+  return talks
+}
+
+/** Every talk, read once per process: content changes only with a new build. */
+export function readTalks(event: H3Event): Promise<Talks> {
+  return reading ??= load(event).catch((error: unknown) => {
+    reading = undefined
+    throw error
+  })
+}
