@@ -117,7 +117,7 @@ export async function readSession(db: Db, settings: Settings, cookieHeader: stri
   const { session, user } = await made.validateSession(id)
   if (!session) return { actor: null, cookie: made.createBlankSessionCookie().serialize() }
   const isTooOld = Date.now() / 1000 - session.createdAt > longestDays * 86_400
-  const isGone = user.leftOn !== null && user.leftOn < today
+  const isGone = user.leftOn !== null && user.leftOn <= today
   if (isTooOld || isGone) {
     await made.invalidateSession(session.id)
     return { actor: null, cookie: made.createBlankSessionCookie().serialize() }

@@ -25,7 +25,7 @@ export async function provePerson(work: Work<Actor | null>, body: SignInBody, ad
     .where(via === 'password' ? { email: name } : { badge: name })
     .first('people.id', 'people.name', 'people.role', 'people.language', 'people.leftOn', 'signInSecrets.passwordHash', 'signInSecrets.pinHash')
   const isRight = await isRightSecret(via === 'password' ? row?.passwordHash : row?.pinHash, secret)
-  if (!row || !isRight || (row.leftOn && row.leftOn < work.today)) {
+  if (!row || !isRight || (row.leftOn && row.leftOn <= work.today)) {
     for (const { key, free } of keys) await countWrongTry(db, key, now, free)
     throw new Refusal('notSignedIn', via === 'password' ? 'wrongPassword' : 'wrongPin', { message: via === 'password' ? 'E-mail or password is wrong' : 'Badge or PIN is wrong' })
   }

@@ -1,8 +1,8 @@
 /** An empty app of the same framework: what the benches compare with. */
 export default defineNuxtConfig({
+  devtools: { enabled: false },
   srcDir: '.',
   compatibilityDate: '2026-01-01',
-  devtools: { enabled: false },
-  telemetry: false,
   nitro: { compressPublicAssets: true },
+  telemetry: false,
 })
