@@ -11,8 +11,7 @@ export default defineEventHandler((event) => {
   setResponseHeader(event, 'cache-control', 'no-store')
   if (!isInternal(event) && changing.has(event.method)) {
     const origin = getHeader(event, 'origin')
-    const own = event.context.settings.origin || getRequestURL(event, { xForwardedProto: false, xForwardedHost: false }).origin
-    if (origin !== own) throw createError({ statusCode: 403, statusMessage: 'Forbidden', message: 'This request came from another address', data: { code: 'wrongOrigin' } })
+    if (origin !== originOf(event)) throw createError({ statusCode: 403, statusMessage: 'Forbidden', message: 'This request came from another address', data: { code: 'wrongOrigin' } })
   }
   if (!event.context.actor && !isPublicRoute(event.method, event.path.split('?')[0]!)) {
     throw createError({ statusCode: 401, statusMessage: 'Unauthorized', message: 'Sign in first', data: { code: 'notSignedIn' } })

@@ -11,6 +11,7 @@ export const publicRoutes = [
   { method: 'GET', path: '/api/join/:token', why: 'a new hire has no secret yet; the link is the proof' },
   { method: 'POST', path: '/api/join/:token', why: 'a new hire has no secret yet; the link is the proof' },
   { method: 'POST', path: '/api/password-resets', why: 'whoever forgot it cannot sign in' },
+  { method: 'GET', path: '/api/password-resets/:token', why: 'the page says whether the mailed link is still good' },
   { method: 'POST', path: '/api/password-resets/:token', why: 'the mailed link is the proof' },
   { method: 'GET', path: '/api/checks/cards/:code', why: 'a stranger checks one card' },
   { method: 'GET', path: '/api/checks/types/:code', why: 'the card check says a type\'s name in words; names are no secret' },

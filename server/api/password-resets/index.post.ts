@@ -1,0 +1,13 @@
+import { z } from 'zod'
+import { resetRequestBody } from '#shared/schemas/links'
+import { askForReset } from '../../services/password-resets'
+
+export default definePublicRoute({
+  summary: 'Ask for a password reset by mail; the answer is the same whether or not the address is known',
+  body: resetRequestBody,
+  answer: z.object({ ok: z.literal(true) }),
+  status: 202,
+}, async ({ work, body }) => {
+  await askForReset({ ...work, actor: null }, body.email)
+  return { ok: true }
+})
