@@ -1,5 +1,6 @@
 import { randomUUID } from 'node:crypto'
 import { dateInZone } from '#shared/domain/dates'
+import { sortNameOf } from '#shared/domain/names'
 import type { SetupBody } from '#shared/schemas/setup'
 import { appendAudit } from '../data/audit'
 import { insertCompany } from '../data/company'
@@ -49,7 +50,7 @@ export async function setUp(work: Work<null>, { token, company, admin }: SetupBo
   await db.transaction(async (trx) => {
     if (await hasPeople(trx)) throw alreadySetUp()
     await insertCompany(trx, { name: company.name, timeZone: company.timeZone, language, isDemo: false }, now)
-    await insertFirstAdmin(trx, { ...person, sortName: admin.name, email: admin.email, employer: company.name, hiredOn: dateInZone(now, company.timeZone), passwordHash, now })
+    await insertFirstAdmin(trx, { ...person, sortName: sortNameOf(admin.name), email: admin.email, employer: company.name, hiredOn: dateInZone(now, company.timeZone), passwordHash, now })
     await appendAudit(trx, { at: now, actorId: person.id, action: 'company.setUp', subject: { kind: 'company', id: '1' }, after: { name: company.name, timeZone: company.timeZone, language } })
     await appendAudit(trx, { at: now, actorId: person.id, action: 'person.added', subject: { kind: 'person', id: person.id }, after: { name: person.name, role: person.role } })
   })
