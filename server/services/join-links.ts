@@ -28,7 +28,7 @@ async function loadForWayIn(work: Work, personId: string): Promise<SignInPerson>
   const { crewIds } = await work.reach()
   if (!person || !(crewIds === 'all' || isWithin(crewIds, person.crewId))) throw notFound('person')
   if (work.actor.role !== 'admin' && person.role !== 'worker') throw new Refusal('forbidden', 'forbidden', { message: 'Only the office may do this for a lead or manager' })
-  if hasLeft(person, work.today) throw new Refusal('conflict', 'hasLeft', { message: 'This person has left the company' })
+  if (hasLeft(person, work.today)) throw new Refusal('conflict', 'hasLeft', { message: 'This person has left the company' })
   return person
 }
 
