@@ -50,6 +50,7 @@ export default defineNuxtConfig({
   compatibilityDate: '2026-01-01',
   nitro: {
     compressPublicAssets: true,
+    esbuild: { options: { target: 'es2022' } },
     experimental: { tasks: true },
     scheduledTasks: { '* * * * *': ['mail:send'], '*/15 * * * *': ['reminders:queue', 'briefings:seal'] },
     serverAssets: [],
