@@ -1,6 +1,6 @@
 import type { Knex } from 'knex'
 import { addDays, addMinutes, type CalendarDate, dayOfWeek, type Instant, startOfDay } from '../../shared/domain/dates'
-import { appendAudit, type AuditEntry } from '../../server/data/audit'
+import { appendAuditRows, type AuditEntry } from '../../server/data/audit'
 import type { Settings } from '../../server/services/settings'
 
 /** What every part of the demo seed works with. Dates hang on `today`, the company's date at the seeding. */
@@ -45,5 +45,5 @@ export async function insertAll(knex: Knex, table: string, rows: readonly object
 /** Appends the gathered audit rows, oldest first. */
 export async function writeAudit(context: DemoContext): Promise<void> {
   const inOrder = [...context.audit].sort((first, second) => (first.at < second.at ? -1 : first.at > second.at ? 1 : 0))
-  for (const entry of inOrder) await appendAudit(context.knex, entry)
+  await appendAuditRows(context.knex, inOrder)
 }

@@ -1,8 +1,11 @@
 import { addDays, addMonths, type CalendarDate } from '../../shared/domain/dates'
+import type { QuizBank } from '../../shared/domain/quiz-bank'
 import { expiryOf, type Validity } from '../../shared/domain/validity'
 import { randomCode } from '../../server/services/hashing'
 import { type DemoContext, insertAll, instantAt, notAfterNow, recordedAt, weekdayOnOrBefore } from './context'
 import { type DemoTypes, planCredentials, type PlannedCredential } from './credential-plan'
+import { seedLearning } from './learning'
+import { taughtModules } from './learning-content'
 import { personId } from './people'
 import { createRandom, demoId } from './random'
 import { type DemoPerson, personByKey } from './roster'
@@ -12,16 +15,16 @@ const company = 'Cedar Hollow Walls'
 const school = 'Stone Bridge Safety School'
 const clinic = 'Quill Creek Work Clinic'
 const manager = 'Marit Solheim'
-/** The modules that people here took in the product itself. */
-const taught = new Set(['stacking', 'running-bond'])
 const fromTheSchool = new Set(['first-aid-cpr', 'outreach-card', 'aerial-lift', 'scaffold-erector', 'excavation'])
+
+const isTaught = (type: string) => taughtModules.some(module => module.slug === type)
 
 interface Paper { number?: string, issuer: string, details?: Record<string, string> }
 
 function paperOf(credential: PlannedCredential, types: DemoTypes): Paper {
   const { person, type, issuedOn } = credential
   const random = createRandom(`paper ${person.badge} ${type} ${issuedOn}`)
-  if (taught.has(type)) return { issuer: company }
+  if (isTaught(type)) return { issuer: company }
   if (types.get(type)?.module) return { issuer: company, details: { judgedBy: manager, judgedOn: issuedOn } }
   if (type === 'respirator-medical') return { issuer: clinic }
   if (type === 'respirator-fit') return { issuer: company, details: { evaluator: manager, equipment: random.pick(['Half mask, medium', 'Half mask, large', 'N95 cup, one size']) } }
@@ -46,10 +49,11 @@ function rowFor(context: DemoContext, types: DemoTypes, credential: PlannedCrede
     details: paper.details ? JSON.stringify(paper.details) : null,
     verification: 'verified', verifiedBy: safety as string | null, verifiedAt: at as string | null, verificationNote: null as string | null,
     withdrawnOn: null as string | null, withdrawnBy: null as string | null, withdrawalReason: null as string | null,
-    cardCode: randomCode(), createdBy: safety, createdAt: at,
+    attemptId: null as string | null, signOffId: null as string | null, cardCode: randomCode(), createdBy: safety, createdAt: at,
   }
 }
 
+/** A credential as the table takes it, with its type's code and its person for the other parts of the seed. */
 export type CredentialRow = ReturnType<typeof rowFor> & { code: string, person: DemoPerson }
 
 async function loadTypes(context: DemoContext): Promise<DemoTypes> {
@@ -93,17 +97,16 @@ function auditCredential(context: DemoContext, row: CredentialRow): void {
   const subject = { kind: 'credential', id: row.id }
   const { personId: person, code: type, issuedOn, expiresOn } = row
   const safety = personId(personByKey('solheim'))
-  context.audit.push({ at: row.createdAt, actorId: row.createdBy, action: 'credential.added', subject, after: { personId: person, type, issuedOn, expiresOn } })
+  context.audit.push({ at: row.createdAt, actorId: row.createdBy, action: row.signOffId ? 'credential.issued' : 'credential.added', subject, after: { personId: person, type, issuedOn, expiresOn } })
   if (row.verification === 'rejected') context.audit.push({ at: row.verifiedAt ?? row.createdAt, actorId: safety, action: 'credential.rejected', subject, after: { note: row.verificationNote } })
   if (row.withdrawnOn) context.audit.push({ at: instantAt(row.withdrawnOn, 15, 25), actorId: safety, action: 'credential.withdrawn', subject, after: { reason: row.withdrawalReason } })
 }
 
-/** Two years of credentials around today. Answers the rows, for what leads up to them. */
-export async function seedCredentials(context: DemoContext): Promise<CredentialRow[]> {
+/** Two years of credentials around today, with the quizzes and hands-on that led to those taught here. */
+export async function seedCredentials(context: DemoContext, banks: readonly QuizBank[]): Promise<void> {
   const types = await loadTypes(context)
   const ordinary = planCredentials(context, types).map(one => withWithdrawal(context, { ...rowFor(context, types, one), code: one.type, person: one.person }))
-  const rows = [...ordinary, ...unusualCards(context, types)]
+  const rows = [...await seedLearning(context, banks, ordinary), ...unusualCards(context, types)]
   await insertAll(context.knex, 'credentials', rows.map(({ code: _code, person: _person, ...row }) => row))
   for (const row of rows) auditCredential(context, row)
-  return rows
 }

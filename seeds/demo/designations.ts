@@ -1,10 +1,10 @@
 import { addDays } from '../../shared/domain/dates'
-import { type DemoContext, insertAll, instantAt, recordedAt } from './context'
+import { type DemoContext, insertAll, instantAt, recordedAt, weekdayOnOrBefore } from './context'
 import { hiredOn, personId } from './people'
 import { demoId } from './random'
 import { personByKey } from './roster'
 import { type SiteKey, siteId } from './sites-and-crews'
-import { held } from './story'
+import { assessorsNamedDaysAgo, held } from './story'
 
 type Naming = [key: string, kind: 'competent' | 'assessor' | 'trainer', subject: string, site: SiteKey | null, authority: string]
 
@@ -45,9 +45,9 @@ async function seedHold(context: DemoContext): Promise<void> {
 export async function seedDesignations(context: DemoContext): Promise<void> {
   const rows = namings.map(([key, kind, subject, site, authority]) => {
     const named = personByKey(key)
-    const twoYearsBack = addDays(context.monday, -104 * 7)
+    const earliest = kind === 'assessor' ? weekdayOnOrBefore(addDays(context.today, -assessorsNamedDaysAgo)) : addDays(context.monday, -104 * 7)
     const settled = addDays(hiredOn(context, named), 90)
-    const startsOn = settled > twoYearsBack ? settled : twoYearsBack
+    const startsOn = settled > earliest ? settled : earliest
     return {
       id: demoId(`designation ${key} ${kind} ${subject} ${site}`), personId: personId(named), kind, subject, siteId: site ? siteId(site) : null,
       authority, startsOn, endsOn: null, createdAt: recordedAt(context, startsOn),

@@ -1,8 +1,10 @@
 import type { Knex } from 'knex'
 import { addDays, dateInZone, dayOfWeek } from '../../shared/domain/dates'
+import type { QuizBank } from '../../shared/domain/quiz-bank'
 import { insertCompany } from '../../server/data/company'
 import type { Settings } from '../../server/services/settings'
 import { companyZone, type DemoContext, instantAt, writeAudit } from './context'
+import { seedBriefings } from './briefings'
 import { seedCredentials } from './credentials'
 import { seedDesignations } from './designations'
 import { hashDemoSecrets, seedPeople, seedSignIns } from './people'
@@ -18,9 +20,9 @@ function contextFor(knex: Knex, settings: Settings): DemoContext {
 
 /**
  * Fills an empty database with "Cedar Hollow Walls": the same people and the same story at every seeding, with
- * dates around the company's today. Does nothing when there are people already. Needs the reference data.
+ * dates around the company's today. Past quizzes are drawn from `banks`. Does nothing when there are people already. Needs the reference data.
  */
-export async function seedDemoCompany(knex: Knex, settings: Settings): Promise<void> {
+export async function seedDemoCompany(knex: Knex, settings: Settings, banks: readonly QuizBank[]): Promise<void> {
   if (await knex('people').first('id')) return
   const hashes = await hashDemoSecrets()
   await knex.transaction(async (trx) => {
@@ -32,8 +34,9 @@ export async function seedDemoCompany(knex: Knex, settings: Settings): Promise<v
     await seedSitesAndCrews(context)
     await seedRules(context)
     await seedDesignations(context)
-    await seedCredentials(context)
+    await seedCredentials(context, banks)
     await seedPourDays(context)
+    await seedBriefings(context)
     await writeAudit(context)
   })
 }

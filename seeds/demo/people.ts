@@ -11,6 +11,9 @@ export const demoPassword = 'running-bond'
 export const demoPin = '739416'
 
 const employers = { own: 'Cedar Hollow Walls', temp: 'Handcart Staffing', sub: 'Two Mesas Pumping' } as const
+/** Whom the person works for. */
+export const employerOf = (one: Pick<DemoPerson, 'employer'>) => employers[one.employer]
+
 const opened = ['office', 'safety', 'super', 'foreman', 'installer']
 
 /** The stable id of a person of the demo company. */
@@ -36,7 +39,7 @@ function personRow(context: DemoContext, one: DemoPerson, index: number) {
     id: personId(one), name: `${one.given} ${one.family}`, sortName: `${one.family}, ${one.given}`, badge: one.badge,
     email: one.mailbox ? `${one.mailbox}@cedarhollow.example` : null,
     phone: `(${area}) 555-01${String(index).padStart(2, '0')}`,
-    role: one.role, language: one.language, readsWell: one.readsWell ?? null, employer: employers[one.employer], employerKind: one.employer,
+    role: one.role, language: one.language, readsWell: one.readsWell ?? null, employer: employerOf(one), employerKind: one.employer,
     trade: one.trade ?? null, hiredOn: hiredOn(context, one), leftOn: leftOn(context, one), crewId: null,
     createdAt, updatedAt: createdAt,
   }

@@ -54,3 +54,25 @@ export const ahead = { key: 'karimi', type: 'scaffold-erector', inDays: 5 } as c
 
 /** Somebody taken off all duties. */
 export const held = { key: 'trujillo', daysAgo: 2, reason: 'Walked under a hung load twice in one morning. Back after a talk with the safety manager.' } as const
+
+/** Days since the assessors' own cards were issued, so that they held them before they signed anybody off. */
+export const issuedDaysAgo: Readonly<Record<string, number>> = {
+  'zamora stacking': 661,
+  'zamora running-bond': 654,
+  'kowalczyk stacking': 658,
+  'kowalczyk running-bond': 651,
+  'tran stacking': 657,
+  'tran running-bond': 650,
+}
+
+/** Days since the assessors were named in writing. */
+export const assessorsNamedDaysAgo = 645
+
+/** Learners who are on their way: the last quiz, and whether the hands-on was asked for. */
+export const onTheWay = [
+  { key: 'adeyemi', module: 'stacking', quizDaysAgo: 2, passed: true, asksForHandsOn: true },
+  { key: 'nkemelu', module: 'stacking', quizDaysAgo: 1, passed: false, asksForHandsOn: false },
+] as const
+
+/** Lessons read, quiz not tried. */
+export const reading = { key: 'karimi', module: 'running-bond', lessons: 2, daysAgo: 3 } as const

@@ -12,6 +12,8 @@ export interface AuditEntry {
 }
 
 const firstHash = '0'.repeat(64)
+/** Well within SQLite's limit of bound values. */
+const rowsPerInsert = 100
 
 /** The part of an audit row that its hash covers. */
 export function auditHash(row: { seq: number, at: string, actorId: string | null, action: string, subjectKind: string, subjectId: string, detailsDigest: string, previousHash: string }): string {
@@ -25,21 +27,34 @@ export function auditHash(row: { seq: number, at: string, actorId: string | null
  * The details stand in a table of their own, so that they can be erased without breaking the chain over their digests.
  */
 export async function appendAudit(db: Db, entry: AuditEntry): Promise<void> {
-  if (!db.isTransaction) return db.transaction(trx => appendAudit(trx, entry))
-  const last = await db('audit').orderBy('seq', 'desc').first('seq', 'hash')
-  const details = JSON.stringify({ before: entry.before ?? null, after: entry.after ?? null })
-  const row = {
-    seq: (last?.seq ?? 0) + 1,
-    at: entry.at,
-    actorId: entry.actorId,
-    action: entry.action,
-    subjectKind: entry.subject.kind,
-    subjectId: entry.subject.id,
-    detailsDigest: sha256(details),
-    previousHash: last?.hash ?? firstHash,
+  await appendAuditRows(db, [entry])
+}
+
+/** Appends several rows in the order given, for work that records much at once. */
+export async function appendAuditRows(db: Db, entries: readonly AuditEntry[]): Promise<void> {
+  let last: { seq: number, hash: string } | undefined = await db('audit').orderBy('seq', 'desc').first('seq', 'hash')
+  const rows = []
+  const allDetails = []
+  for (const entry of entries) {
+    const details = JSON.stringify({ before: entry.before ?? null, after: entry.after ?? null })
+    const row = {
+      seq: (last?.seq ?? 0) + 1,
+      at: entry.at,
+      actorId: entry.actorId,
+      action: entry.action,
+      subjectKind: entry.subject.kind,
+      subjectId: entry.subject.id,
+      detailsDigest: sha256(details),
+      previousHash: last?.hash ?? firstHash,
+    }
+    last = { seq: row.seq, hash: auditHash(row) }
+    rows.push({ ...row, hash: last.hash })
+    allDetails.push({ seq: row.seq, details })
   }
-  await db('audit').insert({ ...row, hash: auditHash(row) })
-  await db('auditDetails').insert({ seq: row.seq, details })
+  for (let start = 0; start < rows.length; start += rowsPerInsert) {
+    await db('audit').insert(rows.slice(start, start + rowsPerInsert))
+    await db('auditDetails').insert(allDetails.slice(start, start + rowsPerInsert))
+  }
 }
 
 /** Recomputes the whole chain. `brokenAt` is the first row whose hash, link or details no longer fit. */

@@ -4,6 +4,7 @@ import { openDatabase } from '../data/database'
 import { appState } from '../services/app-state'
 import { ensureSetupToken } from '../services/setup'
 import { toSettings } from '../services/settings'
+import { readBanks } from '../utils/readBanks'
 
 /** Opens and migrates the database at start; every request waits for it, and the process ends when it fails. */
 export default defineNitroPlugin((nitro) => {
@@ -12,7 +13,7 @@ export default defineNitroPlugin((nitro) => {
 
   const opening = openDatabase(settings.databasePath).then(async (db) => {
     await seedReference(db, settings.clock.now())
-    if (settings.isDemo) await seedDemoCompany(db, settings)
+    if (settings.isDemo) await seedDemoCompany(db, settings, await readBanks())
     await ensureSetupToken(db, settings)
     appState.db = db
     appState.settings = settings

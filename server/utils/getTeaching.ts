@@ -1,16 +1,9 @@
 import { queryCollection } from '@nuxt/content/server'
 import type { H3Event } from 'h3'
-import { parse } from 'yaml'
-import type { QuizBank } from '#shared/domain/quiz-bank'
-import { toBank, toTeaching, type Teaching } from '../services/teaching'
+import { toTeaching, type Teaching } from '../services/teaching'
+import { readBanks } from './readBanks'
 
 let loaded: Promise<Teaching> | undefined
-
-async function readBanks(): Promise<QuizBank[]> {
-  const storage = useStorage('assets:server')
-  const names = await storage.getKeys('quizzes')
-  return Promise.all(names.map(async name => toBank(parse(String(await storage.getItem(name))))))
-}
 
 async function load(event: H3Event): Promise<Teaching> {
   const [modulesEn, modulesEs, lessonsEn, lessonsEs, banks] = await Promise.all([

@@ -1,29 +1,46 @@
+import { generateKeyPairSync } from 'node:crypto'
+import { readdirSync, readFileSync } from 'node:fs'
+import { resolve } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
-import { addDays, addMonths, dateInZone } from '#shared/domain/dates'
+import { parse } from 'yaml'
+import { addDays, addMonths, dateInZone, daysBetween } from '#shared/domain/dates'
+import { firstBrokenLink, hashInput } from '#shared/domain/sheet'
 import { seedDemoCompany } from '~~/seeds/demo'
+import { taughtModules } from '~~/seeds/demo/learning-content'
+import { demoTalks } from '~~/seeds/demo/talks'
 import { seedReference } from '~~/seeds/reference'
 import { checkAuditChain } from '~~/server/data/audit'
 import { type Db, openDatabase } from '~~/server/data/database'
 import { isRightSecret } from '~~/server/services/passwords'
+import { sha256 } from '~~/server/services/hashing'
 import { toSettings } from '~~/server/services/settings'
+import { checkSignature, loadSigningKey } from '~~/server/services/signing-key'
+import { toBank } from '~~/server/services/teaching'
 import { loadEffective } from '../support/demo-credentials'
 
+const signingKey = String(generateKeyPairSync('ed25519').privateKey.export({ type: 'pkcs8', format: 'pem' }))
+const settingsAt = (clock: string) => toSettings({ databasePath: ':memory:', clock, demo: true, filesPath: '', signingKeyPath: '', signingKey, origin: '', tls: false, smtpUrl: '', mailFrom: '', setupToken: '' })
+const readText = (path: string) => readFileSync(resolve(import.meta.dirname, '../..', path), 'utf8')
+const frontMatter = (path: string) => parse(readText(path).split('---')[1] ?? '')
+const banks = ['stacking', 'running-bond'].map(slug => toBank(parse(readText(`server/assets/quizzes/${slug}.yaml`))))
+
 async function seededAt(clock: string): Promise<Db> {
-  const settings = toSettings({ databasePath: ':memory:', clock, demo: true, filesPath: '', signingKeyPath: '', signingKey: '', origin: '', tls: false, smtpUrl: '', mailFrom: '', setupToken: '' })
+  const settings = settingsAt(clock)
   const db = await openDatabase(':memory:')
   await seedReference(db, settings.clock.now())
-  await seedDemoCompany(db, settings)
+  await seedDemoCompany(db, settings, banks)
   return db
 }
 
-const clocks = ['2026-12-01T13:30:00Z', '2026-12-31T23:59:00Z', '2027-01-01T06:59:59Z', '2028-02-29T15:00:00Z', '2028-03-03T15:00:00Z', '2027-03-14T12:00:00Z', '2026-08-15T03:00:00Z']
+// A Tuesday morning, the last minute of a year in Denver, a leap day, three days after one, and a Saturday that is Friday in Denver.
+const clocks = ['2026-12-01T13:30:00Z', '2027-01-01T06:59:59Z', '2028-02-29T15:00:00Z', '2028-03-03T15:00:00Z', '2026-08-15T03:00:00Z']
 
 describe.each(clocks)('the demo company at %s', (clock) => {
   let db: Db
   const today = dateInZone(clock, 'America/Denver')
   beforeAll(async () => {
     db = await seededAt(clock)
-  })
+  }, 30_000)
   afterAll(() => db.destroy())
 
   it('has 4 sites in two zones, 6 crews and about 60 people', async () => {
@@ -107,6 +124,32 @@ describe.each(clocks)('the demo company at %s', (clock) => {
     expect(rules.filter(rule => rule.siteId !== null).map(rule => rule.code)).toEqual(Array(4).fill('site-orientation'))
   })
 
+  it('seals every past morning in its site\'s chain, signed, and leaves none open', async () => {
+    const key = loadSigningKey(settingsAt(clock))
+    for (const site of await db('sites').pluck('id')) {
+      const sheets = await db('sheets').where({ siteId: site }).orderBy('number')
+      const chain = sheets.map(sheet => ({ hash: sheet.hash, previousHash: sheet.previousHash, sheet: JSON.parse(sheet.body) }))
+      expect(chain.length).toBeGreaterThan(30)
+      expect(firstBrokenLink(chain, sha256)).toBeNull()
+      expect(sheets.map(sheet => sheet.number)).toEqual(sheets.map((_, index) => index + 1))
+      expect(chain.every((link, index) => checkSignature(key, hashInput(link), sheets[index]) === 'valid')).toBe(true)
+    }
+    expect(await db('briefings').whereNull('sealedAt').pluck('id')).toEqual([])
+    const last = (await db('briefings').max('localDate as last').first())?.last
+    expect(last < today).toBe(true)
+    expect(daysBetween(last, today)).toBeLessThanOrEqual(4)
+  })
+
+  it('has a quiz passed and a hands-on signed by somebody else behind every card of a taught module', async () => {
+    const cards = await db('credentials').join('credentialTypes', 'credentialTypes.id', 'credentials.typeId').whereIn('code', taughtModules.map(module => module.slug))
+      .leftJoin('attempts', 'attempts.id', 'credentials.attemptId').leftJoin('signOffs', 'signOffs.id', 'credentials.signOffId')
+      .select('credentials.personId', 'credentials.issuedOn', 'attempts.passed as quiz', 'signOffs.passed as handsOn', 'assessorId', 'signedAt', 'submittedAt')
+    expect(cards.length).toBeGreaterThan(30)
+    const unproved = cards.filter(card => card.quiz !== 1 || card.handsOn !== 1 || card.assessorId === card.personId || card.submittedAt > card.signedAt)
+    expect(unproved).toEqual([])
+    expect(cards.filter(card => dateInZone(card.signedAt, 'America/Denver') !== card.issuedOn)).toEqual([])
+  })
+
   it('keeps the audit chain whole and in order', async () => {
     const checked = await checkAuditChain(db)
     expect(checked).toMatchObject({ intact: true })
@@ -121,7 +164,7 @@ describe('the demo sign-ins', () => {
   let db: Db
   beforeAll(async () => {
     db = await seededAt(clocks[0]!)
-  })
+  }, 30_000)
   afterAll(() => db.destroy())
 
   it.each(['safety', 'office', 'foreman', 'super', 'installer'])('lets %s in by the password, in English', async (mailbox) => {
@@ -146,14 +189,29 @@ describe('the demo sign-ins', () => {
 
   it('leaves a database with people as it was', async () => {
     const before = await db('audit').count({ rows: '*' }).first()
-    await seedDemoCompany(db, toSettings({ databasePath: ':memory:', clock: clocks[0], demo: true, filesPath: '', signingKeyPath: '', signingKey: '', origin: '', tls: false, smtpUrl: '', mailFrom: '', setupToken: '' }))
+    await seedDemoCompany(db, settingsAt(clocks[0]!), banks)
     expect(await db('audit').count({ rows: '*' }).first()).toEqual(before)
   })
 
-  it('tells the same story at every seeding', async () => {
+  it('tells the same story at every seeding', { timeout: 30_000 }, async () => {
     const again = await seededAt(clocks[0]!)
     const story = (one: Db) => one('credentials').orderBy('id').select('id', 'personId', 'issuedOn', 'expiresOn', 'number', 'details')
     expect(await story(again)).toEqual(await story(db))
     await again.destroy()
+  })
+})
+
+describe('what the demo tells of the content', () => {
+  it.each(taughtModules.map(module => [module.slug, module] as const))('names the lessons and steps of %s as the content has them', (slug, module) => {
+    const files = readdirSync(resolve(import.meta.dirname, `../../content/en/modules/${slug}`)).filter(name => name !== 'index.md').sort()
+    expect(files.map(name => name.replace(/^\d+\.|\.md$/g, ''))).toEqual(module.lessons)
+    expect(frontMatter(`content/en/modules/${slug}/index.md`).checklist.map((step: { id: string }) => step.id)).toEqual(module.checklist)
+  })
+
+  it('names the talks by the titles of the content', () => {
+    for (const talk of demoTalks) {
+      expect(frontMatter(`content/en/talks/${talk.slug}.md`)).toMatchObject({ title: talk.title.en, work: talk.work })
+      expect(frontMatter(`content/es/talks/${talk.slug}.md`)).toMatchObject({ title: talk.title.es })
+    }
   })
 })
