@@ -42,3 +42,10 @@ export async function changeOwnSecret(work: Work, body: NewSecretBody): Promise<
   await endSessionsOf(db, settings, person.id)
   return startSession(db, settings, person.id, actor.via)
 }
+
+/** Which ways in the actor has, and which they used now. */
+export async function readOwnWays(work: Work) {
+  const person = await getSignInPerson(work.db, { id: work.actor.personId })
+  if (!person) throw notFound('person')
+  return { via: work.actor.via, badge: person.badge, email: person.email, hasPin: person.pinHash !== null, hasPassword: person.passwordHash !== null }
+}

@@ -26,3 +26,6 @@ export const newSecretBody = z.union([
   z.strictObject({ current: password, pin }),
 ], 'needs current, and password or pin')
 export type NewSecretBody = z.infer<typeof newSecretBody>
+
+/** One's own ways in, for the account page. */
+export const ownWaysView = z.object({ via: z.enum(['password', 'badge']), badge: z.string(), email: z.string().nullable(), hasPin: z.boolean(), hasPassword: z.boolean() })
