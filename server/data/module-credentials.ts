@@ -33,8 +33,18 @@ export async function findModuleType(db: Db, module: string): Promise<ModuleType
 
 /** Issues a module's credential: verified from the start, because quiz and hands-on are its proof. */
 export async function insertModuleCredential(db: Db, credential: {
-  id: string, personId: string, typeId: string, issuedOn: string, expiresOn: string | null, issuer: string | null
-  attemptId: string, signOffId: string | null, cardCode: string, verifiedBy: string | null, createdBy: string, now: string
+  id: string
+  personId: string
+  typeId: string
+  issuedOn: string
+  expiresOn: string | null
+  issuer: string | null
+  attemptId: string
+  signOffId: string | null
+  cardCode: string
+  verifiedBy: string | null
+  createdBy: string
+  now: string
 }): Promise<void> {
   const { now, ...row } = credential
   await db('credentials').insert({ ...row, verification: 'verified', verifiedAt: now, createdAt: now })

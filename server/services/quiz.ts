@@ -1,5 +1,5 @@
 import { randomUUID } from 'node:crypto'
-import { addMinutes, compareInstants } from '#shared/domain/dates'
+import { addMinutes, compareInstants, epochSecondsOf } from '#shared/domain/dates'
 import { drawAttempt } from '#shared/domain/drawing-of-items'
 import { attemptResult, toServedItem } from '#shared/domain/grading'
 import type { Answer } from '#shared/domain/quiz-bank'
@@ -104,9 +104,10 @@ export async function readAttempt(work: Work, id: string, language: Language): P
   const attempt = await findOwnAttempt(work.db, work.actor.personId, id)
   if (!attempt) throw notFound('attempt')
   const { module, startedAt, submittedAt, answers } = attempt
+  const secondsLeft = Math.max(0, epochSecondsOf(attempt.endsAt) - epochSecondsOf(work.now))
   const result = toResult(attempt, language)
   return {
-    ...toStarted(attempt, language), module, startedAt, submittedAt, isOver: compareInstants(work.now, attempt.endsAt) >= 0,
+    ...toStarted(attempt, language), module, startedAt, submittedAt, isOver: compareInstants(work.now, attempt.endsAt) >= 0, secondsLeft,
     ...(result && { result, answers: answers ?? {} }),
   }
 }

@@ -74,6 +74,8 @@ export type StartedAttempt = z.infer<typeof startedAttempt>
 /** One's own attempt: what was asked, and once it is graded what was answered and how it went. */
 export const attemptView = startedAttempt.extend({
   module: z.string(), startedAt: z.string(), submittedAt: z.string().nullable(), isOver: z.boolean(),
+  /** Until it ends, by the server's clock: a phone's own may be wrong. */
+  secondsLeft: z.number().int(),
   answers: z.record(z.string(), z.unknown()).optional(), result: attemptResultView.optional(),
 })
 export type AttemptView = z.infer<typeof attemptView>
