@@ -5,6 +5,9 @@ import { readBanks } from './readBanks'
 
 let loaded: Promise<Teaching> | undefined
 
+/** The content database gives numbers back as text. */
+const toNumbers = <Page extends { minutes: number, order: number }>(page: Page): Page => ({ ...page, minutes: Number(page.minutes), order: Number(page.order) })
+
 async function load(event: H3Event): Promise<Teaching> {
   const [modulesEn, modulesEs, lessonsEn, lessonsEs, banks] = await Promise.all([
     queryCollection(event, 'modulesEn').select('path', 'summary', 'cautions', 'checklist', 'sources').all(),
@@ -13,7 +16,7 @@ async function load(event: H3Event): Promise<Teaching> {
     queryCollection(event, 'lessonsEs').select('path', 'title', 'minutes', 'order').all(),
     readBanks(),
   ])
-  return toTeaching({ modules: { en: modulesEn, es: modulesEs }, lessons: { en: lessonsEn, es: lessonsEs }, banks })
+  return toTeaching({ modules: { en: modulesEn, es: modulesEs }, lessons: { en: lessonsEn.map(toNumbers), es: lessonsEs.map(toNumbers) }, banks })
 }
 
 /** Every written module with its bank: read once, and again at each request while developing. Throws when a bank is not sound. */
