@@ -1,5 +1,5 @@
 import { isCounting } from '#shared/domain/validity'
-import { initialsOf } from '#shared/domain/initials'
+import { initialsOf } from '#shared/domain/names'
 import type { CardCheck } from '#shared/schemas/credentials'
 import { findCredentialByCode, findCredentialType } from '../data/credentials'
 import { countWrongTry, getWaitSeconds } from '../data/sign-in-waits'
