@@ -1,4 +1,5 @@
-import { resolve } from 'node:path'
+import { createRequire } from 'node:module'
+import { dirname, resolve } from 'node:path'
 
 const languages = [
   { code: 'en', language: 'en-US', name: 'English' },
@@ -6,6 +7,9 @@ const languages = [
 ] as const
 /** One message file per part of the product, the same names in each language. */
 const messageFiles = ['common', 'sign-in', 'people', 'learn', 'briefing', 'credentials', 'records', 'errors']
+
+/** The worker of exactly the pdf.js that vue-pdf-embed brings; another version refuses to talk to it. */
+const pdfWorker = dirname(createRequire(resolve('node_modules/vue-pdf-embed/dist/index.mjs')).resolve('pdfjs-dist/legacy/build/pdf.worker.min.mjs'))
 
 export default defineNuxtConfig({
   modules: ['@nuxt/eslint', '@pinia/nuxt', '@nuxtjs/tailwindcss', '@nuxtjs/i18n', '@nuxt/content', 'nuxt-security', './modules/route-list'],
@@ -26,6 +30,7 @@ export default defineNuxtConfig({
     },
   },
   css: ['~/assets/css/main.css'],
+  alias: { '#pdf-worker': pdfWorker },
   content: {
     database: { type: 'sqlite', filename: ':memory:' },
     experimental: { sqliteConnector: 'better-sqlite3' },

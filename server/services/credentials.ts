@@ -41,7 +41,7 @@ export async function readCredentials(work: Work, { page, perPage, ...filters }:
 /** How many of the filtered credentials expire on each day. */
 export async function readExpiryDays(work: Work, filters: CredentialFilters): Promise<ExpiryDays> {
   const items = await countByExpiry(work.db, await toCredentialQuery(work, filters))
-  return { items, total: items.reduce((sum, day) => sum + day.count, 0) }
+  return { items, total: items.reduce((sum, day) => sum + day.count, 0), today: work.today }
 }
 
 /** True when the actor may see what this person holds. */

@@ -110,7 +110,7 @@ export const credentialView = credentialItem.extend({
 export type CredentialView = z.infer<typeof credentialView>
 
 /** How many expire on each day, for the small timeline. */
-export const expiryDays = z.object({ items: z.array(z.object({ date, count: z.number().int() })), total: z.number().int() })
+export const expiryDays = z.object({ items: z.array(z.object({ date, count: z.number().int() })), total: z.number().int(), today: date })
 export type ExpiryDays = z.infer<typeof expiryDays>
 
 /** All that a stranger learns about a card. */

@@ -112,7 +112,7 @@ describe('filters', () => {
     expect(await idsOf('sam', { within: 60, person: 'ines' })).toEqual([last])
     expect(await idsOf('sam', { within: 59, person: 'ines' })).toEqual([])
     expect(await idsOf('sam', { within: 60, includeExpired: true, person: 'ines' })).toEqual([last])
-    expect(await readExpiryDays(await workOf(db, 'sam'), { within: 60, person: 'ines' })).toEqual({ items: [{ date: '2027-01-30', count: 1 }], total: 1 })
+    expect(await readExpiryDays(await workOf(db, 'sam'), { within: 60, person: 'ines' })).toEqual({ items: [{ date: '2027-01-30', count: 1 }], total: 1, today: '2026-12-01' })
   })
 
   test('`within` leaves out people who left', async () => {
