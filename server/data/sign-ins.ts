@@ -104,3 +104,8 @@ export async function countSignIns(db: Db, briefingId: string): Promise<number> 
 export async function getSigner(db: Db, personId: string): Promise<{ id: string, name: string, language: Language, hiredOn: string, leftOn: string | null } | null> {
   return await db('people').where({ id: personId }).first('id', 'name', 'language', 'hiredOn', 'leftOn') ?? null
 }
+
+/** Which of these briefings the person stands on. */
+export async function listSignedBriefingIds(db: Db, personId: string, briefingIds: readonly string[]): Promise<Set<string>> {
+  return new Set(await db('signIns').where({ personId }).whereIn('briefingId', briefingIds).whereNull('removedAt').pluck('briefingId'))
+}

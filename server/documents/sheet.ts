@@ -88,7 +88,7 @@ async function sealBlock({ body, hash, previousHash, checkUrl }: Sealed<Briefing
   return {
     unbreakable: true, margin: [0, 8, 0, 0],
     columns: [
-      { svg: await qrSvg(checkUrl), width: 92 },
+      { svg: await qrSvg(checkUrl), width: 84 },
       {
         width: '*', margin: [10, 4, 0, 0], fontSize: 8,
         stack: [

@@ -11,5 +11,5 @@ export async function showPresence(work: Work, briefingId: string, origin: strin
   const briefing = await requireOwnBriefing(work, briefingId)
   assertNotSealed(briefing, work.now)
   const { code, validUntil, takenUntil } = presenceNow(briefing.secret, work.now)
-  return { code, url: presenceUrl(origin, briefing.site.code, briefing.id, code), validUntil, takenUntil }
+  return { code, url: presenceUrl(origin, briefing.site.code, briefing.id, code), validUntil, takenUntil, secondsLeft: (Date.parse(validUntil) - Date.parse(work.now)) / 1000 }
 }

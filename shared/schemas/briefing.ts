@@ -114,7 +114,7 @@ export const briefingListItem = z.object({
 })
 export type BriefingListItem = z.infer<typeof briefingListItem>
 
-export const presenceView = z.object({ code: z.string(), url: z.string(), validUntil: z.string(), takenUntil: z.string() })
+export const presenceView = z.object({ code: z.string(), url: z.string(), validUntil: z.string(), takenUntil: z.string(), secondsLeft: z.number() })
 export type PresenceView = z.infer<typeof presenceView>
 
 /** Digits as people type them: spaces are left out before they are compared. */
