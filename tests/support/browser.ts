@@ -40,15 +40,22 @@ export async function hydrated(page: Page): Promise<void> {
   })
 }
 
-/** What axe finds against WCAG 2.2 AA, a line each; empty when nothing. */
+/**
+ * What axe finds against WCAG 2.2 AA, a line each; empty when nothing. The page is judged at its full height: a bar
+ * that sticks to the window covers what scrolls under it, and what it covers could be scrolled free.
+ */
 export async function axeFindings(page: Page): Promise<string[]> {
+  const before = page.viewportSize()
+  if (before) await page.setViewportSize({ ...before, height: Math.max(before.height, await page.evaluate(() => document.documentElement.scrollHeight)) })
   await page.evaluate(axeSource)
-  return page.evaluate(async () => {
+  const found = await page.evaluate(async () => {
     interface Axe { run: (target: Document, options: unknown) => Promise<{ violations: { id: string, help: string, nodes: { target: string[] }[] }[] }> }
     const axe = (globalThis as unknown as { axe: Axe }).axe
     const result = await axe.run(document, { runOnly: { type: 'tag', values: ['wcag2a', 'wcag2aa', 'wcag21a', 'wcag21aa', 'wcag22aa'] } })
     return result.violations.map(found => `${found.id}: ${found.help} (${found.nodes.map(node => node.target.join(' ')).join(', ')})`)
   })
+  if (before) await page.setViewportSize(before)
+  return found
 }
 
 /** How many pixels the page is wider than its window; 0 when it scrolls nowhere sideways. */
