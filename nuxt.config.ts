@@ -30,7 +30,6 @@ export default defineNuxtConfig({
     },
   },
   css: ['~/assets/css/main.css'],
-  alias: { '#pdf-worker': pdfWorker },
   content: {
     database: { type: 'sqlite', filename: ':memory:' },
     experimental: { sqliteConnector: 'better-sqlite3' },
@@ -52,6 +51,7 @@ export default defineNuxtConfig({
     setupToken: '',
   },
   srcDir: '.',
+  alias: { '#pdf-worker': pdfWorker },
   compatibilityDate: '2026-01-01',
   nitro: {
     compressPublicAssets: true,
