@@ -22,3 +22,17 @@ export function listenToBriefing(briefingId: string, listener: Listener): () => 
     if (set.size === 0) listeners.delete(briefingId)
   }
 }
+
+/** What ends each open stream: a server that is told to stop would otherwise wait for the last live screen. */
+const openStreams = new Set<() => void>()
+
+/** Remembers how to end a stream; the answer forgets it. */
+export function holdStream(end: () => void): () => void {
+  openStreams.add(end)
+  return () => openStreams.delete(end)
+}
+
+/** Ends every open stream; the screens connect again by themselves, or ask every few seconds. */
+export function endAllStreams(): void {
+  for (const end of openStreams) end()
+}

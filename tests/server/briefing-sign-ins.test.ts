@@ -264,6 +264,17 @@ describe('the live stream', () => {
     expect(heard.text).not.toContain('Wren Abbott')
   })
 
+  it('does not keep a server from stopping', async () => {
+    const other = await startSmallCompany()
+    const lead = await other.as('foreman')
+    const { body: { id } } = await lead.post<{ id: string }>('/api/briefings', { siteId: 'site-a', talk: 'hose-whip', work: [] })
+    const cookie = [...lead.cookies].map(([name, value]) => `${name}=${value}`).join('; ')
+    await fetch(`${other.server.origin}/api/briefings/${id}/events`, { headers: { cookie } })
+    const before = performance.now()
+    await other.stop()
+    expect(performance.now() - before).toBeLessThan(5000)
+  })
+
   it('is not for hands or other sites', async () => {
     const id = await steps.open()
     expect((await (await company.as('hand-a')).get(`/api/briefings/${id}/events`)).status).toBe(403)

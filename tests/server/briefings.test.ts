@@ -152,3 +152,29 @@ describe('the morning at a site', () => {
     expect((await foreman.get('/api/talks/none')).status).toBe(404)
   })
 })
+
+describe('weather hazards', () => {
+  interface Report { heatIndexF: number | null, windChillF: number | null, evaporation: number | null, hazards: { tag: string, band: string, source: string }[] }
+  const ask = (query: string) => foreman.get<Report>(`/api/weather-hazards?${query}`)
+
+  it('works out the published check values, and null where a formula does not apply or a figure is missing', async () => {
+    expect((await ask('temperatureF=100&humidity=10')).body.heatIndexF).toBeCloseTo(94.122, 3)
+    expect((await ask('temperatureF=40&windMph=20')).body).toMatchObject({ heatIndexF: null, evaporation: null })
+    expect(Math.round((await ask('temperatureF=40&windMph=20')).body.windChillF!)).toBe(30)
+    expect((await ask('temperatureF=60&windMph=20')).body.windChillF).toBeNull()
+    expect((await ask('temperatureF=87&humidity=50&windMph=12&concreteF=80')).body.evaporation).not.toBeNull()
+    expect((await ask('')).body).toEqual({ heatIndexF: null, windChillF: null, evaporation: null, hazards: [] })
+  })
+
+  it('names each hazard\'s band with its source, and moves a fitting talk up', async () => {
+    const { hazards } = (await ask('temperatureF=20&windMph=15')).body
+    expect(hazards.map(hazard => hazard.tag)).toEqual(expect.arrayContaining(['cold', 'wind']))
+    expect(hazards.every(hazard => hazard.source.length > 0)).toBe(true)
+    const suggested = await foreman.get<{ items: { slug: string, reasons: { kind: string, tags?: string[] }[] }[] }>('/api/talks/suggestions?site=site-a&temperatureF=20&windMph=15')
+    expect(suggested.body.items.find(item => item.slug === 'cold-hands-wet-cement')!.reasons).toContainEqual({ kind: 'weather', tags: ['cold'] })
+  })
+
+  it.each(['temperatureF=warm', 'humidity=101', 'windMph=-1', 'surprise=1'])('answers 400 to %s', async (query) => {
+    expect((await ask(query)).status).toBe(400)
+  })
+})

@@ -1,5 +1,5 @@
 import { idParams } from '#shared/schemas/common'
-import { listenToBriefing } from '../../../services/briefing-events'
+import { holdStream, listenToBriefing } from '../../../services/briefing-events'
 import { requireOwnBriefing } from '../../../services/briefing-access'
 import { mayStillWatch } from '../../../services/watching'
 
@@ -18,7 +18,9 @@ export default defineRoute({
   }
   const stopListening = listenToBriefing(params.id, ({ kind, data }) => void pushIfAllowed({ event: kind, data: JSON.stringify(data) }))
   const heartbeat = setInterval(() => void pushIfAllowed({ event: 'heartbeat', data: '{}' }), heartbeatMilliseconds)
+  const forget = holdStream(() => void stream.close())
   stream.onClosed(() => {
+    forget()
     clearInterval(heartbeat)
     stopListening()
   })
