@@ -46,3 +46,8 @@ export async function dutiesByCrew(db: Db): Promise<Map<string, { duty: string, 
   }
   return found
 }
+
+/** Everybody employed on a date, rostered or not, by name. */
+export async function listEmployed(db: Db, date: string): Promise<{ id: string, name: string }[]> {
+  return db('people').where('hiredOn', '<=', date).where(query => query.whereNull('leftOn').orWhere('leftOn', '>', date)).orderBy(['sortName', 'id']).select('id', 'name')
+}

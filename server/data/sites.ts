@@ -36,3 +36,9 @@ export async function insertSite(db: Db, site: Site, now: string): Promise<void>
 export async function updateSite(db: Db, id: string, changes: Partial<Omit<Site, 'id'>>): Promise<void> {
   if (Object.keys(changes).length > 0) await db('sites').where({ id }).update(changes)
 }
+
+/** The briefing that takes sign-ins at a site on its own date: an open one, otherwise the last that is closed but not sealed. */
+export async function getOpenBriefingId(db: Db, siteId: string, date: string): Promise<string | undefined> {
+  const row = await db('briefings').where({ siteId, localDate: date }).whereNull('sealedAt').orderByRaw('closed_at is null desc, opened_at desc, id').first('id')
+  return row?.id
+}

@@ -30,6 +30,8 @@ interface RouteParts<Params, Query, Body> {
   answer?: z.ZodType
   /** 200 unless said: 201 when a thing is made, 204 when there is nothing to say. */
   status?: 200 | 201 | 202 | 204
+  /** With `?preview=true` nothing is made: answers 200 whatever `status` says. */
+  previews?: boolean
 }
 
 interface Given<Who extends Actor | null, Params, Query, Body> {
@@ -80,13 +82,15 @@ async function workOf<Who extends Actor | null>(event: H3Event, actor: Who): Pro
 
 type Handle<Who extends Actor | null, Params, Query, Body, Answer> = (given: Given<Who, Params, Query, Body>) => Answer | Promise<Answer>
 
+const isPreview = (query: unknown) => typeof query === 'object' && query !== null && 'preview' in query && query.preview === true
+
 async function run<Who extends Actor | null, Params, Query, Body, Answer>(event: H3Event, actor: Who, parts: RouteParts<Params, Query, Body>, handle: Handle<Who, Params, Query, Body, Answer>): Promise<Answer> {
   try {
     const params = parseInput(parts.params, getRouterParams(event, { decode: true }))
     const query = parseInput(parts.query, getQuery(event))
     const body = parts.body ? parseInput(parts.body, await readJson(event)) : undefined as Body
     const answer = await handle({ work: await workOf(event, actor), params, query, body, event })
-    const status = event.context.answerStatus ?? parts.status
+    const status = event.context.answerStatus ?? (parts.previews && isPreview(query) ? 200 : parts.status)
     if (status) setResponseStatus(event, status)
     return status === 204 ? null as Answer : answer
   }
