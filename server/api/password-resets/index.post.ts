@@ -7,7 +7,8 @@ export default definePublicRoute({
   body: resetRequestBody,
   answer: z.object({ ok: z.literal(true) }),
   status: 202,
-}, async ({ work, body }) => {
+}, async ({ work, body, event }) => {
   await askForReset({ ...work, actor: null }, body.email)
+  event.waitUntil(runTask('mail:send'))
   return { ok: true }
 })
