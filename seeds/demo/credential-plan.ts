@@ -5,7 +5,7 @@ import { hiredOn, leftOn, personId } from './people'
 import { createRandom, type Random } from './random'
 import { type DemoPerson, hasSkill, roster, type Skill } from './roster'
 import { isDuring, demoStays, mondayOfWeek, peopleOfStay, siteId } from './sites-and-crews'
-import { issuedDaysAgo, runningOut } from './story'
+import { blowoutDrillDaysAgo, issuedDaysAgo, runningOut } from './story'
 
 /** What is planned for one credential before it becomes a row. */
 export interface PlannedCredential {
@@ -72,7 +72,7 @@ function issueForDaysLeft(today: CalendarDate, months: number, validity: Validit
 function quietIssue(context: DemoContext, one: DemoPerson, type: string, months: number | null, random: Random): CalendarDate {
   const { today } = context
   const hired = hiredOn(context, one)
-  const fixed = issuedDaysAgo[`${one.key} ${type}`]
+  const fixed = type === 'blowout-response' ? blowoutDrillDaysAgo : issuedDaysAgo[`${one.key} ${type}`]
   if (fixed !== undefined) return weekdayOnOrBefore(addDays(today, -fixed))
   const latest = addDays(earlier(today, leftOn(context, one) ?? today), -10)
   const span = months === null ? 700 : Math.round(months * 30) - 90

@@ -55,7 +55,7 @@ export const ahead = { key: 'karimi', type: 'scaffold-erector', inDays: 5 } as c
 /** Somebody taken off all duties. */
 export const held = { key: 'trujillo', daysAgo: 2, reason: 'Walked under a hung load twice in one morning. Back after a talk with the safety manager.' } as const
 
-/** Days since the assessors' own cards were issued, so that they held them before they signed anybody off. */
+/** Days since cards were issued whose day matters: the assessors held theirs before they signed anybody off, and who is new to a pour duty was taught lately. */
 export const issuedDaysAgo: Readonly<Record<string, number>> = {
   'zamora stacking': 661,
   'zamora running-bond': 654,
@@ -63,6 +63,7 @@ export const issuedDaysAgo: Readonly<Record<string, number>> = {
   'kowalczyk running-bond': 651,
   'tran stacking': 657,
   'tran running-bond': 650,
+  'camacho pump-and-hose': 75,
 }
 
 /** Days since the assessors were named in writing. */
@@ -76,3 +77,6 @@ export const onTheWay = [
 
 /** Lessons read, quiz not tried. */
 export const reading = { key: 'karimi', module: 'running-bond', lessons: 2, daysAgo: 3 } as const
+
+/** Days since everybody who pours went through the yearly blowout drill together. */
+export const blowoutDrillDaysAgo = 40

@@ -3,6 +3,7 @@ import { readdirSync, readFileSync } from 'node:fs'
 import { resolve } from 'node:path'
 import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { parse } from 'yaml'
+import { crewingOf } from '#shared/domain/crewing'
 import { addDays, addMonths, dateInZone, daysBetween } from '#shared/domain/dates'
 import { firstBrokenLink, hashInput } from '#shared/domain/sheet'
 import { seedDemoCompany } from '~~/seeds/demo'
@@ -11,6 +12,8 @@ import { demoTalks } from '~~/seeds/demo/talks'
 import { seedReference } from '~~/seeds/reference'
 import { checkAuditChain } from '~~/server/data/audit'
 import { type Db, openDatabase } from '~~/server/data/database'
+import { openClearanceBook } from '~~/server/services/clearance'
+import { expectedPeople } from '~~/server/services/roster'
 import { isRightSecret } from '~~/server/services/passwords'
 import { sha256 } from '~~/server/services/hashing'
 import { toSettings } from '~~/server/services/settings'
@@ -115,6 +118,20 @@ describe.each(clocks)('the demo company at %s', (clock) => {
     // A yearly interval can't end on 29 February of a leap year: it ends the day before.
     expect([addDays(today, -3), addMonths(addMonths(addDays(today, -3), -12), 12)]).toContain(expired[0]?.expiresOn)
     expect(hose.filter(one => one.state === 'inDate' || one.state === 'dueSoon')).toHaveLength(1)
+  })
+
+  it('can crew every crew\'s usual work today but the pour crew\'s, which is one short at hose and spotter', async () => {
+    const short: Record<string, { duties: string[], missing: number }> = {}
+    for (const crew of await db('crews').select('id', 'name')) {
+      const slots = await db('crewDuties').join('duties', 'duties.id', 'crewDuties.dutyId').where({ crewId: crew.id }).select('code as duty', 'count')
+      const stay = await db('assignments').where({ crewId: crew.id }).where('startsOn', '<=', today).where(query => query.whereNull('endsOn').orWhere('endsOn', '>=', today)).first('siteId')
+      const personIds = (await expectedPeople(db, stay.siteId, today)).filter(person => person.crewId === crew.id).map(person => person.id)
+      const book = await openClearanceBook(db, { whom: 'all', date: today })
+      const pairs = personIds.flatMap(personId => slots.map(({ duty }) => ({ personId, duty, state: book.ask(personId, duty, stay.siteId).state, fix: null })))
+      const { short: empty, because } = crewingOf({ slots, personIds, pairs })
+      if (empty.length > 0) short[crew.name] = { duties: because!.duties.sort(), missing: empty.reduce((sum, slot) => sum + slot.count, 0) }
+    }
+    expect(short).toEqual({ 'Pour crew': { duties: ['hose-hand', 'pump-spotter'], missing: 1 } })
   })
 
   it('asks everybody for hazard communication and each site for its orientation', async () => {
