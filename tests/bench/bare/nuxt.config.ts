@@ -1,3 +1,5 @@
+import { defineNuxtConfig } from 'nuxt/config'
+
 /** An empty app of the same framework: what the benches compare with. */
 export default defineNuxtConfig({
   devtools: { enabled: false },
