@@ -62,6 +62,11 @@ export async function listGradedAttempts(db: Db, personId: string, module?: stri
   return rows.map(toAttempt) as (Attempt & { submittedAt: string, result: StoredResult, passed: boolean })[]
 }
 
+/** Everybody's graded attempts at a module, in the order submitted. */
+export async function listModuleAttempts(db: Db, module: string): Promise<Attempt[]> {
+  return (await db<AttemptRow>('attempts').where({ module }).whereNotNull('submittedAt').orderBy('submittedAt')).map(toAttempt)
+}
+
 /** Passed attempts, of these people, that no credential was issued from; in the order submitted. */
 export async function listUnusedPasses(db: Db, personIds: readonly string[], module?: string): Promise<{ id: string, personId: string, module: string, submittedAt: string }[]> {
   return db('attempts').whereIn('personId', personIds).where({ passed: true, ...(module && { module }) })

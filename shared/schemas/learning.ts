@@ -1,5 +1,6 @@
 import { z } from 'zod'
 import { credentialStates, itemKinds, moduleStates } from '../domain/states'
+import { itemFlags } from '../domain/item-review'
 import { units } from '../domain/units'
 import { code, id, language, text } from './common'
 import { mark } from './mark'
@@ -96,3 +97,9 @@ export const signOffBody = z.strictObject({
 export type SignOffBody = z.infer<typeof signOffBody>
 export const signOffMade = z.object({ id: z.string(), passed: z.boolean(), credentialId: z.string().optional() })
 export type SignOffMade = z.infer<typeof signOffMade>
+
+export const itemReviewQuery = z.strictObject({ module: code })
+export const itemReviewView = z.object({
+  people: z.number().int(), alpha: z.number().nullable(),
+  items: z.array(z.object({ id: z.string(), served: z.number().int(), p: z.number(), itemRest: z.number().nullable(), picks: z.record(z.string(), z.number().int()), flags: z.array(z.enum(itemFlags)) })),
+})

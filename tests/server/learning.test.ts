@@ -137,6 +137,17 @@ describe('learning over the API', () => {
     expect((await hire.get(`/api/attempts/${body.id}`)).body).toMatchObject({ submittedAt: null })
   })
 
+  it('tells the safety manager, and nobody else, how the items did', async () => {
+    const safety = await signedIn('safety')
+    const { status, body } = await safety.get<{ people: number, items: { served: number, p: number }[] }>('/api/item-review?module=running-bond')
+    expect(status).toBe(200)
+    expect(body.items).toHaveLength(banks.find(bank => bank.module === 'running-bond')!.items.length)
+    expect(body.people).toBeGreaterThan(0)
+    expect((await safety.get('/api/item-review')).status).toBe(400)
+    expect((await safety.get('/api/item-review?module=welding')).status).toBe(404)
+    expect((await hire.get('/api/item-review?module=running-bond')).status).toBe(403)
+  })
+
   it('asks for a session everywhere', async () => {
     const stranger = createClient()
     for (const path of ['/api/modules', '/api/modules/stacking', '/api/modules/stacking/lessons/stop-height', '/api/attempts/x', '/api/sign-off-requests']) expect((await stranger.get(path)).status).toBe(401)
