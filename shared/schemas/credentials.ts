@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { credentialStates, validityBases } from '../domain/states'
+import { credentialStates, validityBases, type CredentialState } from '../domain/states'
 import { code, date, flag, id, line, listOf, paging, text } from './common'
 
 /** What a card may tell beyond its dates; never required to save, the law's gaps are shown as missing. */
@@ -36,7 +36,13 @@ export const withdrawalBody = z.strictObject({ reason: text(1000) })
 export const credentialSorts = ['person', 'credential', 'state', 'expiresOn', 'issuedOn', 'basis'] as const
 const sorts = [...credentialSorts, ...credentialSorts.map(name => `-${name}` as const)]
 
-const stateList = z.string().transform(list => list.split(',')).pipe(z.array(z.enum(credentialStates)).min(1).max(credentialStates.length))
+const isState = (word: string): word is CredentialState => (credentialStates as readonly string[]).includes(word)
+const stateList = z.string().transform((list, context) => {
+  const words = list.split(',')
+  if (words.every(isState)) return words
+  context.addIssue({ code: 'custom', message: `must be of ${credentialStates.join(', ')}` })
+  return z.NEVER
+})
 
 /** The filters that the list, its export, its calendar and the page's address share. */
 export const credentialFilters = {
