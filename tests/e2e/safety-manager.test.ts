@@ -81,7 +81,7 @@ test('a hand adds a card with a photo; the safety manager verifies it; a strange
   await hand.page.getByRole('button', { name: 'Add the card' }).click()
   await hand.page.waitForURL(/credentials\/[\w-]{36}$/)
   await hydrated(hand.page)
-  expect(await hand.page.getByText('not verified').first().isVisible()).toBe(true)
+  await hand.page.getByText('not verified').first().waitFor()
   expect(await axeFindings(hand.page)).toEqual([])
   expect(await sidewaysScroll(hand.page)).toBe(0)
   expect(hand.complaints).toEqual([])
