@@ -71,7 +71,7 @@ describe('files', () => {
 
   test('refuses a body that is no form, and one without its boundary', async () => {
     expect((await hand.post('/api/files', { file: 'x' })).status).toBe(415)
-    const answer = await fetch(`${hand.origin}/api/files`, { method: 'POST', body: 'x', headers: { origin: hand.origin, 'content-type': 'multipart/form-data', cookie: [...hand.cookies].map(([name, value]) => `${name}=${value}`).join('; ') } })
+    const answer = await fetch(`${hand.origin}/api/files`, { method: 'POST', body: 'x', headers: { 'origin': hand.origin, 'content-type': 'multipart/form-data', 'cookie': [...hand.cookies].map(([name, value]) => `${name}=${value}`).join('; ') } })
     expect(answer.status).toBe(400)
   })
 })
