@@ -61,6 +61,15 @@ describe('headers', () => {
     expect(headers.get('strict-transport-security')).toMatch(/max-age=\d{8}/)
   })
 
+  it('stand on JSON answers too, which take the light way past the page rules', async () => {
+    for (const path of ['/api/health', '/api/nothing', '/api/session']) {
+      const { headers } = await createClient().get(path)
+      expect([path, headers.get('x-content-type-options')]).toEqual([path, 'nosniff'])
+    }
+    const page = await createClient().get('/sign-in')
+    expect(page.headers.get('content-security-policy')).toContain('nonce-')
+  })
+
   it('keep the session from scripts and from other sites, and from plain http behind TLS', async () => {
     const plain = await createClient().post('/api/session', { email: 'safety@cedarhollow.example', password: 'running-bond' })
     expect(plain.headers.get('set-cookie')).toMatch(/^session=[^;]+;.*HttpOnly/i)
