@@ -1,5 +1,6 @@
-import { beforeAll, describe, expect, it } from 'vitest'
+import { afterAll, beforeAll, describe, expect, it } from 'vitest'
 import { signedIn, type Client } from '../support/client'
+import { startServer, type RunningServer } from '../support/server'
 
 interface Sites { sites: { id: string, name: string, date: string, isRostered: boolean }[] }
 interface Duty { duty: string, state: string, missing: { anyOf: string[], why: { kind: string } }[] }
@@ -12,11 +13,16 @@ describe('the demo company for who walks in', () => {
   let newHire: Client
   let site: Sites['sites'][number]
   let today: Today
+  // A server of its own: this is about the company as it is seeded, before anybody did anything.
+  let server: RunningServer
   beforeAll(async () => {
-    [foreman, installer, newHire] = await Promise.all([signedIn('foreman'), signedIn('installer'), signedIn('newHire')])
+    server = await startServer({ env: { NUXT_DEMO: 'true', NUXT_CLOCK: '2026-12-01T13:30:00Z' } })
+    ;[foreman, installer, newHire] = await Promise.all((['foreman', 'installer', 'newHire'] as const).map(who => signedIn(who, server.origin))) as [Client, Client, Client]
     site = (await foreman.get<Sites>('/api/session/sites')).body.sites[0]!
     today = (await foreman.get<Today>(`/api/sites/${site.id}/today`)).body
   })
+
+  afterAll(() => server.stop())
 
   const dutyOf = (name: string, duty: string) => today.people.find(person => person.name === name)?.duties.find(one => one.duty === duty)
 
@@ -65,7 +71,7 @@ describe('the demo company for who walks in', () => {
   })
 
   it('shows the safety manager what runs out in the next 60 days and what already did', async () => {
-    const safety = await signedIn('safety')
+    const safety = await signedIn('safety', server.origin)
     const due = (await safety.get<{ total: number }>('/api/credentials?within=60')).body.total
     const all = (await safety.get<{ total: number }>('/api/credentials?within=60&includeExpired=true')).body.total
     expect(due).toBeGreaterThanOrEqual(20)

@@ -195,7 +195,8 @@ describe('duties, types and rules', () => {
     expect(preview.body.stops).toContainEqual(expect.objectContaining({ personId: (await me(installer)).id, duty: 'stacker', siteId: firstSite.id, was: 'cleared', becomes: 'notCleared' }))
     expect((await safety.get<List<unknown>>('/api/rules?perPage=200')).body.total).toBe(before)
     const clearance = async () => (await foreman.get<{ people: { personId: string, duties: { state: string }[] }[] }>(`/api/clearance?site=${firstSite.id}&duty=stacker`)).body.people
-    const mine = async () => { const { id } = await me(installer); return (await clearance()).find(one => one.personId === id)?.duties[0]?.state }
+    const { id: installerId } = await me(installer)
+    const mine = async () => (await clearance()).find(one => one.personId === installerId)?.duties[0]?.state
     expect(await mine()).toBe('cleared')
     const saved = await safety.post<{ id: string }>('/api/rules', rule)
     expect([saved.status, saved.body]).toMatchObject([201, rule])
