@@ -32,7 +32,7 @@ export default {
       borderRadius: { DEFAULT: '3px' },
     },
   },
-  // `office:` styles what stands in the office shell (html.office), where a mouse is at hand.
-  plugins: [plugin(({ addVariant }) => addVariant('office', 'html.office &'))],
+  // `office:` styles what stands in the office shell (html.office), at a desk's width.
+  plugins: [plugin(({ addVariant }) => addVariant('office', '@media (min-width: 1024px) { html.office & }'))],
   corePlugins: { container: false },
 } satisfies Config
