@@ -1,0 +1,109 @@
+import type { Browser } from 'playwright-core'
+import { afterAll, beforeAll, describe, expect, inject, it } from 'vitest'
+import { axeFindings, desk, narrow, openBrowser, openDevice, sidewaysScroll, visit } from '../support/browser'
+import { createClient, signedIn, type Client, type DemoPerson } from '../support/client'
+import { filesBelow } from '../support/project-files'
+
+type Who = DemoPerson | 'nobody'
+interface Visit { page: string, as: Who, path: (ids: Ids) => string, sizes?: ('narrow' | 'desk')[] }
+interface Ids { person: string, credential: string, briefing: string, signOff: string, site: string, hash: string, card: string, join: string, reset: string }
+
+/** Every page of the product, by its file, and who looks at it. */
+const visits: Visit[] = [
+  { page: 'account.vue', as: 'foreman', path: () => '/account' },
+  { page: 'audit.vue', as: 'safety', path: () => '/audit' },
+  { page: 'briefings/[id].vue', as: 'foreman', path: ids => `/briefings/${ids.briefing}` },
+  { page: 'briefings/index.vue', as: 'safety', path: () => '/briefings' },
+  { page: 'check/[hash].vue', as: 'nobody', path: ids => `/check/${ids.hash}` },
+  { page: 'credentials/[id].vue', as: 'safety', path: ids => `/credentials/${ids.credential}` },
+  { page: 'credentials/index.vue', as: 'safety', path: () => '/credentials?within=60&includeExpired=true' },
+  { page: 'credentials/index.vue', as: 'foreman', path: () => '/credentials' },
+  { page: 'credentials/new.vue', as: 'installer', path: () => '/credentials/new' },
+  { page: 'crew.vue', as: 'foreman', path: () => '/crew' },
+  { page: 'crews.vue', as: 'office', path: () => '/crews' },
+  { page: 'forgot.vue', as: 'nobody', path: () => '/forgot' },
+  { page: 'imports.vue', as: 'office', path: () => '/imports' },
+  { page: 'index.vue', as: 'installer', path: () => '/' },
+  { page: 'index.vue', as: 'foreman', path: () => '/' },
+  { page: 'index.vue', as: 'safety', path: () => '/' },
+  { page: 'join/[token].vue', as: 'nobody', path: ids => ids.join },
+  { page: 'learn/[module]/[lesson].vue', as: 'newHire', path: () => '/learn/stacking/level-and-plumb' },
+  { page: 'learn/[module]/index.vue', as: 'newHire', path: () => '/learn/stacking' },
+  { page: 'learn/[module]/quiz.vue', as: 'installer', path: () => '/learn/stacking/quiz' },
+  { page: 'learn/index.vue', as: 'newHire', path: () => '/learn' },
+  { page: 'mail.vue', as: 'office', path: () => '/mail' },
+  { page: 'more.vue', as: 'super', path: () => '/more' },
+  { page: 'my-cards.vue', as: 'installer', path: () => '/my-cards' },
+  { page: 'people/[id].vue', as: 'safety', path: ids => `/people/${ids.person}` },
+  { page: 'people/[id].vue', as: 'foreman', path: ids => `/people/${ids.person}` },
+  { page: 'people/index.vue', as: 'office', path: () => '/people' },
+  { page: 'people/new.vue', as: 'office', path: () => '/people/new' },
+  { page: 'requirements.vue', as: 'safety', path: () => '/requirements' },
+  { page: 'reset/[token].vue', as: 'nobody', path: ids => ids.reset },
+  { page: 's/[siteCode].vue', as: 'nobody', path: ids => `/s/${ids.site}` },
+  { page: 'setup.vue', as: 'nobody', path: () => '/setup' },
+  { page: 'sign-in.vue', as: 'nobody', path: () => '/sign-in' },
+  { page: 'sign-offs/[id].vue', as: 'foreman', path: ids => `/sign-offs/${ids.signOff}` },
+  { page: 'sign-offs/index.vue', as: 'foreman', path: () => '/sign-offs' },
+  { page: 'sites.vue', as: 'office', path: () => '/sites' },
+  { page: 'verify/[code].vue', as: 'nobody', path: ids => `/verify/${ids.card}` },
+]
+interface List<Item> { items: Item[] }
+
+/** What the pages with an id are looked at with; a link that is over is a page too. */
+async function findIds(): Promise<Ids> {
+  const [safety, foreman, office, installer] = await Promise.all((['safety', 'foreman', 'office', 'installer'] as const).map(who => signedIn(who))) as [Client, Client, Client, Client]
+  const own = (await installer.get<List<{ id: string }>>('/api/credentials')).body.items[0]!
+  const card = (await installer.get<{ cardCode?: string, code?: string }>(`/api/credentials/${own.id}`)).body
+  const sites = (await foreman.get<{ sites: { id: string, code: string }[] }>('/api/session/sites')).body.sites
+  const briefings = (await foreman.get<List<{ id: string, state: string }>>(`/api/briefings?site=${sites[0]!.id}`)).body.items
+  const sealed = briefings.find(row => row.state === 'sealed')!
+  const sheet = (await foreman.get<{ hash: string }>(`/api/briefings/${sealed.id}/sheet.json`)).body
+  const requests = (await foreman.get<List<{ id: string }>>('/api/sign-off-requests')).body.items
+  const person = (await safety.get<List<{ id: string }>>(`/api/people?q=2041`)).body.items[0]!
+  const newcomer = (await office.post<{ id: string }>('/api/people', { name: 'Nadia Link', badge: `N${Date.now()}` })).body
+  const join = (await office.post<{ url: string }>(`/api/people/${newcomer.id}/join-link`)).body
+  return { person: person.id, credential: own.id, briefing: sealed.id, signOff: requests[0]!.id, site: sites[0]!.code, hash: sheet.hash, card: card.cardCode ?? card.code ?? 'NONE', join: new URL(join.url).pathname, reset: '/reset/this-link-has-been-used-long-ago' }
+}
+
+describe('every page', () => {
+  let browser: Browser
+  let ids: Ids
+  beforeAll(async () => {
+    browser = await openBrowser()
+    ids = await findIds()
+  })
+  afterAll(() => browser.close())
+
+  it('is on the list of this test', () => {
+    expect([...new Set(visits.map(one => one.page))].sort()).toEqual(filesBelow('pages', '.vue'))
+  })
+
+  async function look(one: Visit, size: 'narrow' | 'desk') {
+    const { context, page, complaints } = await openDevice(browser, { size: size === 'desk' ? desk : narrow, language: 'en' })
+    if (one.as !== 'nobody') {
+      const client: Client = one.as === 'newHire' ? await signedIn('newHire') : await signedIn(one.as)
+      await context.addCookies([...client.cookies].map(([name, value]) => ({ name, value, url: inject('origin') })))
+    }
+    await visit(page, one.path(ids))
+    await page.waitForLoadState('networkidle')
+    const found = { axe: await axeFindings(page), sideways: await sidewaysScroll(page), headings: await page.locator('h1').count(), lang: await page.locator('html').getAttribute('lang') }
+    await context.close()
+    return { ...found, complaints: complaints.filter(text => !(one.page === 'reset/[token].vue' && text.includes('404'))) }
+  }
+
+  it.each(visits.map(one => [`${one.page} as ${one.as}`, one] as const))('%s passes axe, scrolls nowhere sideways at 320 px and complains of nothing', async (_name, one) => {
+    for (const size of ['narrow', 'desk'] as const) {
+      expect({ size, ...await look(one, size) }).toEqual({ size, axe: [], sideways: 0, headings: 1, lang: one.as === 'newHire' ? 'es' : 'en', complaints: [] })
+    }
+  })
+
+  it('keeps a stranger out of what needs a session, and brings them back after signing in', async () => {
+    const { context, page } = await openDevice(browser)
+    await visit(page, '/credentials?within=30')
+    expect(new URL(page.url()).pathname).toBe('/sign-in')
+    expect(new URL(page.url()).searchParams.get('next')).toBe('/credentials?within=30')
+    await context.close()
+    expect((await createClient().get('/api/credentials')).status).toBe(401)
+  })
+})
