@@ -11,6 +11,9 @@ export default defineNitroPlugin((nitro) => {
   const settings = toSettings(useRuntimeConfig())
   if (settings.clock.isSet) console.warn(`[pourwright] NUXT_CLOCK is set: the server's clock starts at ${settings.clock.now()}. For tests and demos only.`)
 
+  // Everybody knows the demo's password: without a HOST it answers this machine only.
+  if (settings.isDemo && !process.env.HOST && !process.env.NITRO_HOST) process.env.HOST = '127.0.0.1'
+
   const opening = openDatabase(settings.databasePath).then(async (db) => {
     await seedReference(db, settings.clock.now())
     if (settings.isDemo) await seedDemoCompany(db, settings, await readBanks())
