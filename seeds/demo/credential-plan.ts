@@ -38,13 +38,17 @@ const typesOfSkill: Record<Skill, readonly string[]> = {
   o: ['outreach-card'],
 }
 
+/** The first two courses of the wall: who works here learned them elsewhere or in person, which the safety manager judged adequate. */
+const groundModules = ['ready-for-site', 'working-at-height', 'what-the-wall-is-made-of', 'footings-and-layout', 'tools-and-cutting'] as const
+
 const beforeHire = new Set(['outreach-card', 'first-aid-cpr'])
 const printedMonths = 24
 
-function typesFor(one: DemoPerson): string[] {
+function typesFor(context: DemoContext, one: DemoPerson): string[] {
   const skills = Object.keys(typesOfSkill) as Skill[]
   const codes = skills.filter(skill => hasSkill(one, skill)).flatMap(skill => typesOfSkill[skill])
-  return [...new Set(one.skills ? [...codes, 'ladders'] : codes)]
+  const ground = hiredOn(context, one) < context.today ? groundModules : []
+  return [...new Set([...ground, ...codes, ...(one.skills ? ['ladders'] : [])])]
 }
 
 const later = (first: CalendarDate, second: CalendarDate) => (first > second ? first : second)
@@ -90,7 +94,7 @@ function theOneBefore(context: DemoContext, now: PlannedCredential, validity: Va
 }
 
 function planFor(context: DemoContext, one: DemoPerson, types: DemoTypes): PlannedCredential[] {
-  return typesFor(one).flatMap((type) => {
+  return typesFor(context, one).flatMap((type) => {
     const validity = types.get(type)?.validity ?? { kind: 'never' }
     const random = createRandom(`credential ${one.badge} ${type}`)
     const months = monthsOf(validity)

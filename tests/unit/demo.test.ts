@@ -102,10 +102,10 @@ describe.each(clocks)('the demo company at %s', (clock) => {
     expect(without).toEqual([])
   })
 
-  it('lets the new hire hold hazard communication and the orientation only', async () => {
+  it('lets the new hire hold hazard communication, the orientation and the two lowest courses only', async () => {
     const codes = await db('credentials').join('credentialTypes', 'credentialTypes.id', 'credentials.typeId')
       .join('people', 'people.id', 'credentials.personId').where({ badge: '2041' }).pluck('code')
-    expect(codes.sort()).toEqual(['hazard-communication', 'site-orientation'])
+    expect(codes.sort()).toEqual(['footings-and-layout', 'hazard-communication', 'ready-for-site', 'site-orientation', 'tools-and-cutting', 'what-the-wall-is-made-of', 'working-at-height'])
   })
 
   it('lets somebody\'s pump and hose run out three days ago, so that the pour crew is short', async () => {

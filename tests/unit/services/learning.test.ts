@@ -8,7 +8,8 @@ import { askForSignOff, listSignOffRequests, readSignOffRequest, signOff } from 
 import { openLearningCompany, makeAssessor, rightAnswers, workAfter } from '../../support/learning-company'
 import { readRealTeaching } from '../../support/teaching'
 
-const teaching = readRealTeaching()
+/** A wall of which two blocks are written, so that the rules stand clear of how much is taught today. */
+const teaching = new Map([...readRealTeaching()].filter(([slug]) => slug === 'stacking' || slug === 'running-bond'))
 const slug = 'stacking'
 const steps = teaching.get(slug)!.text.en.checklist.map(({ id }) => ({ id, ok: true }))
 const mark = { kind: 'tap' } as const
