@@ -118,6 +118,7 @@ describe('the shortest fix', () => {
   })
 
   it('makes the day crewed when it is carried out and nothing stays unfillable', () => {
+    const slotsIn = (list: readonly { count: number }[]) => list.reduce((sum, { count }) => sum + count, 0)
     const word = fc.constantFrom('a', 'b', 'c', 'a+10', 'b+20', 'c+30', '~a')
     const lines = fc.array(fc.uniqueArray(word, { maxLength: 3, selector: one => one.replace(/[~+\d]/g, '') }), { maxLength: 5 })
       .map(words => words.map((list, index) => `p${index}: ${list.join(' ')}`))
@@ -126,10 +127,11 @@ describe('the shortest fix', () => {
       const before = ask(wanted, people)
       const done = new Set((before.fix?.steps ?? []).map(step => `${step.personId} ${step.duty}`))
       const pairs = pairsOf(...people).map(pair => done.has(`${pair.personId} ${pair.duty}`) ? { ...pair, state: 'cleared' as const } : pair)
-      expect(ask(wanted, people, { pairs }).short).toHaveLength(before.unfillable.length)
+      // Slots, not lines of duties: where two fixes cost the same, the empty slots may fall to other duties.
+      expect(slotsIn(ask(wanted, people, { pairs }).short)).toBe(slotsIn(before.unfillable))
       expect(before.crewed).toBe(before.short.length === 0)
       expect(before.because === null).toBe(before.crewed)
-    }), { numRuns: 300 })
+    }), { numRuns: 300, examples: [[{ a: 1, b: 2, c: 1 }, ['p0: b a', 'p1: a c']]] })
   })
 })
 
