@@ -2,6 +2,8 @@
 export interface TaughtInDemo {
   slug: string
   lessons: readonly string[]
+  /** Minutes of each lesson. */
+  minutes: readonly number[]
   checklist: readonly string[]
 }
 
@@ -10,11 +12,13 @@ export const taughtModules: readonly TaughtInDemo[] = [
   {
     slug: 'stacking',
     lessons: ['seat-every-block', 'level-and-plumb', 'seams-and-weak-spots', 'stop-height'],
+    minutes: [5, 4, 4, 5],
     checklist: ['instructions', 'footing-check', 'seat', 'line', 'plumb', 'cut-seam', 'stop', 'clean'],
   },
   {
     slug: 'running-bond',
     lessons: ['stagger-and-overlap', 'corners-left-and-right', 'ties-in-line', 'off-pattern-joints'],
+    minutes: [5, 4, 4, 5],
     checklist: ['overlap', 'layout', 'corners', 'stagger', 'ties', 'strap', 'bar-seat'],
   },
 ]

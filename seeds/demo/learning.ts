@@ -1,7 +1,8 @@
-import { addDays, addMinutes, type CalendarDate } from '../../shared/domain/dates'
+import { addDays, addMinutes, dateInZone, type CalendarDate } from '../../shared/domain/dates'
 import type { QuizBank } from '../../shared/domain/quiz-bank'
+import { MINUTES_PER_HANDS_ON_STEP, quizMinutes } from '../../shared/domain/training-minutes'
 import { attemptRow } from './attempts'
-import { type DemoContext, insertAll, instantAt, weekdayOnOrBefore } from './context'
+import { companyZone, type DemoContext, insertAll, instantAt, weekdayOnOrBefore } from './context'
 import type { CredentialRow } from './credentials'
 import { taughtModule, taughtModules } from './learning-content'
 import { hiredOn, personId } from './people'
@@ -10,9 +11,9 @@ import { type DemoPerson, personByKey } from './roster'
 import { assessorsNamedDaysAgo, onTheWay, reading } from './story'
 
 interface Past {
-  reads: object[]
+  reads: ReadRow[]
   attempts: ReturnType<typeof attemptRow>[]
-  signOffs: object[]
+  signOffs: { id: string, personId: string, module: string, steps: string, signedAt: string }[]
   requests: object[]
 }
 
@@ -22,10 +23,11 @@ function assessorFor(context: DemoContext, person: DemoPerson, date: CalendarDat
   return personByKey(isNamed && person.role !== 'foreman' && person.role !== 'superintendent' ? key : 'solheim')
 }
 
-const readRow = (person: DemoPerson, module: string, lesson: string, at: string) =>
+interface ReadRow { personId: string, module: string, lesson: string, language: string, firstReadAt: string, lastReadAt: string }
+const readRow = (person: DemoPerson, module: string, lesson: string, at: string): ReadRow =>
   ({ personId: personId(person), module, lesson, language: person.language, firstReadAt: at, lastReadAt: at })
 
-function readsOf(person: DemoPerson, module: string, day: CalendarDate, random: Random, most = Infinity): object[] {
+function readsOf(person: DemoPerson, module: string, day: CalendarDate, random: Random, most = Infinity): ReadRow[] {
   const begun = instantAt(day, 7, random.between(5, 40))
   return taughtModule(module).lessons.slice(0, most).map((lesson, index) => readRow(person, module, lesson, addMinutes(begun, index * 8)))
 }
@@ -69,6 +71,18 @@ function seedLearnersOnTheWay(context: DemoContext, banks: ReadonlyMap<string, Q
   past.reads.push(...readsOf(personByKey(reading.key), reading.module, weekdayOnOrBefore(addDays(context.today, -reading.daysAgo)), createRandom('reading'), reading.lessons))
 }
 
+/** The minutes that this past counts, as the product counts them. */
+function minutesOf({ reads, attempts, signOffs }: Past): object[] {
+  const row = (id: string, at: string, rest: object) => ({ id: demoId(`minutes ${id}`), lesson: null, doneOn: dateInZone(at, companyZone), doneAt: at, ...rest })
+  const lessonMinutes = (module: string, slug: string) => taughtModule(module).minutes[taughtModule(module).lessons.indexOf(slug)] ?? 0
+  const readings = new Map(reads.map(read => [`${read.personId} ${read.module} ${read.lesson}`, read]))
+  return [
+    ...[...readings].map(([key, { personId, module, lesson, firstReadAt }]) => row(key, firstReadAt, { personId, module, kind: 'lesson', lesson, minutes: lessonMinutes(module, lesson) })),
+    ...attempts.map(({ id, personId, module, startedAt, submittedAt }) => row(id, submittedAt, { personId, module, kind: 'quiz', minutes: quizMinutes(startedAt, submittedAt, 60) })),
+    ...signOffs.map(({ id, personId, module, steps, signedAt }) => row(id, signedAt, { personId, module, kind: 'handsOn', minutes: (JSON.parse(steps) as unknown[]).length * MINUTES_PER_HANDS_ON_STEP })),
+  ]
+}
+
 /**
  * What people read, tried and were signed off on. Answers the credentials with what they were issued from. A module
  * whose bank is not given has no past.
@@ -85,5 +99,6 @@ export async function seedLearning(context: DemoContext, banks: readonly QuizBan
   await insertAll(context.knex, 'attempts', past.attempts)
   await insertAll(context.knex, 'signOffs', past.signOffs)
   await insertAll(context.knex, 'signOffRequests', past.requests)
+  await insertAll(context.knex, 'trainingMinutes', minutesOf(past))
   return issued
 }

@@ -1,7 +1,7 @@
-import { companyView } from '#shared/schemas/company'
+import { companyToday } from '#shared/schemas/company'
 
 export default defineRoute({
   summary: 'The company\'s name and settings',
   ability: 'own.records',
-  answer: companyView,
-}, ({ work }) => work.company)
+  answer: companyToday,
+}, ({ work }) => ({ ...work.company, today: work.today }))

@@ -1,3 +1,4 @@
+import type { Language } from '#shared/domain/states'
 import type { Db } from './database'
 
 /** The modules that somebody is designated to assess on a date: at every site (null) or at one. */
@@ -19,4 +20,10 @@ export async function listSitesOfPerson(db: Db, personId: string, date: string):
 export async function findLearner(db: Db, id: string, date: string): Promise<{ id: string, name: string, isEmployed: boolean } | undefined> {
   const row = await db('people').where({ id }).first('id', 'name', 'hiredOn', 'leftOn')
   return row && { id: row.id, name: row.name, isEmployed: row.hiredOn <= date && (row.leftOn === null || row.leftOn >= date) }
+}
+
+/** Everybody who works here on the date, by name, with the language they are taught in. */
+export async function listEmployedLearners(db: Db, date: string): Promise<{ id: string, name: string, language: Language }[]> {
+  return db('people').where('hiredOn', '<=', date).where(query => query.whereNull('leftOn').orWhere('leftOn', '>=', date))
+    .orderBy(['sortName', 'id']).select('id', 'name', 'language')
 }

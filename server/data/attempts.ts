@@ -30,9 +30,13 @@ export interface Attempt {
   result: StoredResult | null
   score: number | null
   passed: boolean | null
+  /** Who reads it aloud to them, or null. */
+  readBy: string | null
+  /** Every language it was shown in. */
+  languages: Language[]
 }
 
-type AttemptRow = Omit<Attempt, 'served' | 'answers' | 'result' | 'passed'> & { served: string, answers: string | null, result: string | null, passed: 0 | 1 | null }
+type AttemptRow = Omit<Attempt, 'served' | 'answers' | 'result' | 'passed' | 'languages'> & { served: string, answers: string | null, result: string | null, passed: 0 | 1 | null, languages: string | null }
 
 function toAttempt(row: AttemptRow): Attempt {
   return {
@@ -41,13 +45,42 @@ function toAttempt(row: AttemptRow): Attempt {
     answers: row.answers === null ? null : JSON.parse(row.answers) as Attempt['answers'],
     result: row.result === null ? null : JSON.parse(row.result) as StoredResult,
     passed: row.passed === null ? null : row.passed === 1,
+    languages: row.languages === null ? [row.language] : JSON.parse(row.languages) as Language[],
   }
 }
 
-/** One person's attempt, or undefined: other people's are not there. */
+/** An attempt of one's own or that one reads aloud to its owner, or undefined: other people's are not there. */
 export async function findOwnAttempt(db: Db, personId: string, id: string): Promise<Attempt | undefined> {
-  const row = await db<AttemptRow>('attempts').where({ id, personId }).first()
+  const row = await db<AttemptRow>('attempts').where({ id }).where(query => query.where({ personId }).orWhere({ readBy: personId })).first()
   return row && toAttempt(row)
+}
+
+/** Records who reads an attempt aloud. */
+export async function setReader(db: Db, id: string, readBy: string): Promise<void> {
+  await db('attempts').where({ id }).update({ readBy })
+}
+
+/** Records the languages that an attempt was shown in. */
+export async function setLanguages(db: Db, id: string, languages: readonly Language[]): Promise<void> {
+  await db('attempts').where({ id }).update({ languages: JSON.stringify(languages) })
+}
+
+/** When a person last failed a module's quiz, or null. */
+export async function findLastFailedAt(db: Db, personId: string, module: string): Promise<string | null> {
+  const row = await db('attempts').where({ personId, module, passed: false }).orderBy('submittedAt', 'desc').first('submittedAt')
+  return row?.submittedAt ?? null
+}
+
+/** People whose last two attempts at one of these modules, since an instant, were not passed; by name. */
+export async function listFailedTwice(db: Db, { modules, since }: { modules: readonly string[], since: string }): Promise<{ personId: string, person: string, module: string }[]> {
+  const rows: { personId: string, person: string, module: string, passed: 0 | 1 }[] = await db('attempts').join('people', 'people.id', 'attempts.personId')
+    .whereIn('module', modules).where('submittedAt', '>=', since).orderBy(['people.sortName', 'attempts.personId', 'module', 'submittedAt'])
+    .select('attempts.personId', 'people.name as person', 'module', 'passed')
+  return rows.filter((row, index) => {
+    const [before, next] = [rows[index - 1], rows[index + 1]]
+    const isSame = (other?: typeof row) => other?.personId === row.personId && other.module === row.module
+    return row.passed === 0 && isSame(before) && before?.passed === 0 && !isSame(next)
+  }).map(({ passed: _failed, ...row }) => row)
 }
 
 /** A person's attempt at a module that is neither submitted nor over, or undefined. */
@@ -80,7 +113,7 @@ export async function listTriedModules(db: Db, personId: string): Promise<string
 }
 
 /** Starts an attempt. */
-export async function insertAttempt(db: Db, attempt: Pick<Attempt, 'id' | 'personId' | 'module' | 'language' | 'seed' | 'served' | 'startedAt' | 'endsAt'>): Promise<void> {
+export async function insertAttempt(db: Db, attempt: Pick<Attempt, 'id' | 'personId' | 'module' | 'language' | 'seed' | 'served' | 'startedAt' | 'endsAt' | 'readBy'>): Promise<void> {
   await db('attempts').insert({ ...attempt, served: JSON.stringify(attempt.served) })
 }
 

@@ -9,6 +9,7 @@ import { progressOf, type Progress } from './learning-progress'
 import { openingOf } from './quiz'
 import { notFound } from './refusal'
 import type { TaughtModule, Teaching } from './teaching'
+import { countLesson, requireTrainingHours } from './training-minutes'
 import type { Work } from './work'
 
 function toLine(module: Module, taught: TaughtModule | undefined, progress: Progress, language: Language): ModuleLine {
@@ -77,7 +78,7 @@ function requireLesson(teaching: Teaching, slug: string, lesson: string) {
   return { module, taught, index }
 }
 
-/** One lesson with its place among the others; `page` is its text. 404 for what is not there. */
+/** One lesson with its place among the others; `page` is its text. 404 for what is not there, 409 `trainingClosed` outside the company's hours. */
 export async function readLesson(
   work: Work, teaching: Teaching,
   { slug, lesson, language, page }: { slug: string, lesson: string, language: Language, page: { body: unknown, sources: string[] } | undefined },
@@ -85,6 +86,7 @@ export async function readLesson(
   const { module, taught, index } = requireLesson(teaching, slug, lesson)
   const current = taught.lessons[index]
   if (!page || !current) throw notFound('lesson')
+  requireTrainingHours(work)
   const { reads } = await progressOf(work.db, work, teaching, work.actor.personId)
   const neighbour = (at: number) => {
     const other = taught.lessons[at]
@@ -97,8 +99,11 @@ export async function readLesson(
   }
 }
 
-/** Records that a lesson was read to its end; again is fine, and is what opens a paused quiz. */
+/** Records that a lesson was read to its end; again is fine, and is what opens a paused quiz. Counts its minutes where reading it was required. */
 export async function markRead(work: Work, teaching: Teaching, { slug, lesson, language }: { slug: string, lesson: string, language: Language }): Promise<void> {
-  requireLesson(teaching, slug, lesson)
-  await recordLessonRead(work.db, { personId: work.actor.personId, module: slug, lesson, language, now: work.now })
+  const { taught, index } = requireLesson(teaching, slug, lesson)
+  await work.db.transaction(async (trx) => {
+    await recordLessonRead(trx, { personId: work.actor.personId, module: slug, lesson, language, now: work.now })
+    await countLesson(trx, work, { module: slug, lesson, minutes: taught.lessons[index]?.minutes ?? 0 })
+  })
 }

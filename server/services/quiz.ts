@@ -6,15 +6,19 @@ import type { Answer } from '#shared/domain/quiz-bank'
 import { quizOpening, type QuizOpening } from '#shared/domain/quiz-opening'
 import type { Language } from '#shared/domain/states'
 import type { AttemptResultView, AttemptView, StartedAttempt, SubmissionBody } from '#shared/schemas/learning'
-import { findOwnAttempt, findRunningAttempt, gradeAttempt, insertAttempt, listGradedAttempts, setAttemptCredential, type Attempt, type Served } from '../data/attempts'
+import { findLastAssessorTalk } from '../data/assessor-talks'
+import { findLearner } from '../data/assessors'
+import { findOwnAttempt, findRunningAttempt, gradeAttempt, insertAttempt, listGradedAttempts, setAttemptCredential, setLanguages, setReader, type Attempt, type Served } from '../data/attempts'
 import type { Db } from '../data/database'
 import { closeRequest } from '../data/sign-offs'
 import { isAnswered, refuseUnreadable, rightOf } from './answers'
 import { randomToken } from './hashing'
+import { requireAssessable } from './assessing'
 import { issueWhenComplete } from './issuing'
 import { progressOf } from './learning-progress'
 import { notFound, Refusal } from './refusal'
 import type { TaughtModule, Teaching } from './teaching'
+import { countQuiz, requireTrainingHours } from './training-minutes'
 import type { Work } from './work'
 
 /** How long an attempt runs. */
@@ -37,6 +41,7 @@ export async function openingOf(db: Db, { personId, module, reads, now }: { pers
       const readAt = reads.get(`${module.slug}/${slug}`)
       return readAt ? [[slug, readAt]] : []
     })),
+    assessorAt: await findLastAssessorTalk(db, personId, module.slug),
     pauseMinutes: module.bank.pauseMinutes,
     now,
   })
@@ -46,7 +51,7 @@ const toStarted = ({ id, endsAt, served }: Pick<Attempt, 'id' | 'endsAt' | 'serv
   id, endsAt, items: served.items.map(({ item, options }) => ({ ...toServedItem(item, language, options) }) as StartedAttempt['items'][number]),
 })
 
-async function draw(trx: Db, work: Work, taught: TaughtModule, language: Language): Promise<Attempt> {
+async function draw(trx: Db, work: Work, { taught, language, personId }: { taught: TaughtModule, language: Language, personId: string }): Promise<Attempt> {
   const seed = randomToken(16)
   const items = new Map(taught.bank.items.map(item => [item.id, item]))
   const served: Served = {
@@ -56,29 +61,37 @@ async function draw(trx: Db, work: Work, taught: TaughtModule, language: Languag
       return item ? [{ item, options }] : []
     }),
   }
-  const attempt = { id: randomUUID(), personId: work.actor.personId, module: taught.slug, language, seed, served, startedAt: work.now, endsAt: addMinutes(work.now, ATTEMPT_MINUTES) }
+  const readBy = personId === work.actor.personId ? null : work.actor.personId
+  const attempt = { id: randomUUID(), personId, module: taught.slug, language, seed, served, startedAt: work.now, endsAt: addMinutes(work.now, ATTEMPT_MINUTES), readBy }
   await insertAttempt(trx, attempt)
-  return { ...attempt, submittedAt: null, answers: null, result: null, score: null, passed: null }
+  return { ...attempt, submittedAt: null, answers: null, result: null, score: null, passed: null, languages: [language] }
 }
 
 /**
  * Draws an attempt, or answers the one that is running, so that a reload loses nothing. Lessons need not be read
- * first (test-out), and a laid block can be taken again to renew it. 404 for no such module; 409 `notOpen` while
- * the block waits or is not written; 409 `paused` after two fails in a row.
+ * first (test-out), and a laid block can be taken again to renew it. With `personId` an assessor reads the quiz to
+ * somebody: it is that person's attempt, recorded as read by the assessor. 404 for no such module; 409
+ * `trainingClosed` outside the company's hours; 409 `notOpen` while the block waits or is not written; 409 `paused`
+ * after two fails in a row.
  */
-export async function startAttempt(work: Work, teaching: Teaching, { slug, language }: { slug: string, language: Language }): Promise<StartedAttempt> {
+export async function startAttempt(work: Work, teaching: Teaching, { slug, language, personId = work.actor.personId }: { slug: string, language: Language, personId?: string }): Promise<StartedAttempt> {
   const { db, actor, now } = work
+  if (personId !== actor.personId) await requireAssessable(db, work, teaching, { personId, module: slug })
   return db.transaction(async (trx) => {
-    const progress = await progressOf(trx, work, teaching, actor.personId)
+    const progress = await progressOf(trx, work, teaching, personId)
     const state = progress.states.get(slug)
     if (state === undefined) throw notFound('module')
     const taught = teaching.get(slug)
     if (!taught || state === 'waiting' || state === 'unwritten') throw new Refusal('conflict', 'notOpen', { message: 'This block can\'t be laid yet', data: { state } })
-    const running = await findRunningAttempt(trx, actor.personId, slug, now)
-    if (running) return toStarted(running, language)
-    const opening = await openingOf(trx, { personId: actor.personId, module: taught, reads: progress.reads, now })
+    const running = await findRunningAttempt(trx, personId, slug, now)
+    if (running) {
+      if (personId !== actor.personId) await setReader(trx, running.id, actor.personId)
+      return toStarted(running, language)
+    }
+    requireTrainingHours(work)
+    const opening = await openingOf(trx, { personId, module: taught, reads: progress.reads, now })
     if (!opening.isOpen) throw new Refusal('conflict', 'paused', { message: 'Read the missed lessons first', data: { opensAt: opening.opensAt, lessons: opening.lessonsToRead } })
-    return toStarted(await draw(trx, work, taught, language), language)
+    return toStarted(await draw(trx, work, { taught, language, personId }), language)
   })
 }
 
@@ -99,21 +112,23 @@ function toResult(attempt: Attempt, language: Language): AttemptResultView | und
   }
 }
 
-/** One's own attempt, to go on with or to look back at; other people's are not there. */
+/** One's own attempt, or one that the actor reads to somebody, to go on with or to look back at; others' are not there. */
 export async function readAttempt(work: Work, id: string, language: Language): Promise<AttemptView> {
   const attempt = await findOwnAttempt(work.db, work.actor.personId, id)
   if (!attempt) throw notFound('attempt')
-  const { module, startedAt, submittedAt, answers } = attempt
+  const { module, startedAt, submittedAt, answers, personId, readBy } = attempt
   const secondsLeft = Math.max(0, epochSecondsOf(attempt.endsAt) - epochSecondsOf(work.now))
   const result = toResult(attempt, language)
+  const nameOf = async (who: string) => (await findLearner(work.db, who, work.today))?.name ?? ''
   return {
     ...toStarted(attempt, language), module, startedAt, submittedAt, isOver: compareInstants(work.now, attempt.endsAt) >= 0, secondsLeft,
+    ...(readBy && { readBy: await nameOf(readBy) }), ...(personId !== work.actor.personId && { person: { id: personId, name: await nameOf(personId) } }),
     ...(result && { result, answers: answers ?? {} }),
   }
 }
 
 /**
- * Grades an attempt, once: a second submit answers the first result. 404 for others' attempts, 409 `ended` from
+ * Grades an attempt, once: a second submit answers the first result. The languages it was started and sent in are kept. 404 for others' attempts, 409 `ended` from
  * its end on. A number that can't be read is refused and nothing is graded. A pass issues the credential when
  * nothing else is missing.
  */
@@ -131,6 +146,8 @@ export async function submitAttempt(work: Work, teaching: Teaching, { id, answer
     refuseUnreadable(items, given, graded.items)
     const result = { ...graded, credentialId: null }
     await gradeAttempt(trx, id, { submittedAt: now, answers: Object.fromEntries(given), result })
+    if (!attempt.languages.includes(language)) await setLanguages(trx, id, [...attempt.languages, language])
+    await countQuiz(trx, work, { personId: attempt.personId, module: attempt.module, startedAt: attempt.startedAt, most: ATTEMPT_MINUTES })
     const completed = { ...attempt, submittedAt: now, answers: Object.fromEntries(given), result: { ...result, credentialId: await issueAfterPass(trx, work, teaching, attempt, result.passed) } }
     if (completed.result.credentialId) await setAttemptCredential(trx, id, completed.result)
     return toResult(completed, language)!

@@ -1,44 +1,18 @@
 import { randomUUID } from 'node:crypto'
 import { moduleBySlug } from '#shared/domain/curriculum'
-import { isCountingOn } from '#shared/domain/validity'
 import type { Language } from '#shared/domain/states'
 import type { SignOffBody, SignOffMade, SignOffRequestList, SignOffRequestView } from '#shared/schemas/learning'
-import { findLearner, listAssessorDesignations, listSitesOfPerson } from '../data/assessors'
 import { listUnusedPasses } from '../data/attempts'
 import { appendAudit } from '../data/audit'
 import type { Db } from '../data/database'
-import { listModuleCredentials } from '../data/module-credentials'
 import { closeRequest, findOpenRequest, insertRequest, insertSignOff, listOpenRequests, type OpenRequest } from '../data/sign-offs'
+import { assessedModules, isReached, requireAssessable } from './assessing'
 import { issueWhenComplete } from './issuing'
 import { progressOf } from './learning-progress'
 import { notFound, Refusal } from './refusal'
 import type { TaughtModule, Teaching } from './teaching'
+import { countHandsOn } from './training-minutes'
 import type { Work } from './work'
-
-/** Where somebody may assess a module: nowhere when it is missing, everywhere (`'all'`), or at these sites. */
-type AssessedModules = ReadonlyMap<string, 'all' | ReadonlySet<string>>
-
-/**
- * The modules that the actor may sign off today: the safety manager all of them; others those they are designated
- * assessor of in writing, for as long as they hold the module's credential in date themselves.
- */
-async function assessedModules(db: Db, work: Work, teaching: Teaching): Promise<AssessedModules> {
-  const { actor, today } = work
-  if (actor.role === 'safety') return new Map([...teaching.keys()].map(slug => [slug, 'all']))
-  const held = new Set((await listModuleCredentials(db, actor.personId)).filter(credential => isCountingOn(credential, today)).map(credential => credential.module))
-  const assessed = new Map<string, 'all' | Set<string>>()
-  for (const { module, siteId } of await listAssessorDesignations(db, actor.personId, today)) {
-    const before = assessed.get(module)
-    if (!held.has(module) || before === 'all') continue
-    assessed.set(module, siteId === null ? 'all' : new Set([...before ?? [], siteId]))
-  }
-  return assessed
-}
-
-async function isReached(db: Db, sites: 'all' | ReadonlySet<string> | undefined, personId: string, today: string): Promise<boolean> {
-  if (sites === undefined || sites === 'all') return sites === 'all'
-  return (await listSitesOfPerson(db, personId, today)).some(siteId => sites.has(siteId))
-}
 
 function requireChecklist(teaching: Teaching, slug: string): TaughtModule {
   if (!moduleBySlug(slug)) throw notFound('module')
@@ -117,14 +91,9 @@ function refuseWrongSteps(taught: TaughtModule, steps: SignOffBody['steps']): vo
  * 422 `stepsMissing`. A witness is no assessor: the mark is the assessor's own.
  */
 export async function signOff(work: Work, teaching: Teaching, body: SignOffBody): Promise<SignOffMade> {
-  const { db, actor, now, today } = work
+  const { db, actor, now } = work
   const taught = requireChecklist(teaching, body.module)
-  const learner = await findLearner(db, body.personId, today)
-  if (!learner) throw notFound('person')
-  if (learner.id === actor.personId) throw new Refusal('forbidden', 'ownSignOff', { message: 'Nobody signs off their own hands-on' })
-  const assessed = await assessedModules(db, work, teaching)
-  if (!await isReached(db, assessed.get(taught.slug), learner.id, today)) throw new Refusal('forbidden', 'notAssessor', { message: 'Only an assessor of this module who holds it in date signs it off' })
-  if (!learner.isEmployed) throw new Refusal('unprocessable', 'notEmployed', { message: 'This person does not work here today', fields: { personId: 'does not work here today' } })
+  const learner = await requireAssessable(db, work, teaching, body)
   if (body.mark.kind === 'witnessed') throw new Refusal('unprocessable', 'wrongMark', { message: 'The mark is the assessor\'s own', fields: { mark: 'must be a tap, typed or drawn' } })
   refuseWrongSteps(taught, body.steps)
   const passed = body.steps.every(step => step.ok)
@@ -133,6 +102,7 @@ export async function signOff(work: Work, teaching: Teaching, body: SignOffBody)
     const signed = { id: randomUUID(), personId: learner.id, assessorId: actor.personId, module: taught.slug, steps: body.steps, mark: body.mark, passed, signedAt: now }
     await insertSignOff(trx, signed)
     await closeRequest(trx, learner.id, taught.slug, now)
+    await countHandsOn(trx, work, { personId: learner.id, module: taught.slug, steps: body.steps.length })
     const { mark: _strokes, ...after } = signed
     await appendAudit(trx, { at: now, actorId: actor.personId, action: 'signOff.given', subject: { kind: 'signOff', id: signed.id }, after })
     const credentialId = passed ? await issueWhenComplete(trx, work, { personId: learner.id, module: taught }) : null

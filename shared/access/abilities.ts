@@ -41,6 +41,7 @@ const holders = {
   'clearance.read': ['foreman', 'superintendent', 'safety', 'admin'],
   'learning.own': everybody,
   'signOff.give': [...leads, 'safety'],
+  'trainingMinutes.read': ['safety', 'admin'],
   'itemReview.read': ['safety'],
   'briefing.run': [...leads, 'safety'],
   'briefing.read': everybody,

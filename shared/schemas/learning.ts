@@ -53,6 +53,9 @@ export const servedItem = z.object({
   options: z.array(step).optional(), unit: z.enum(units).optional(), units: z.array(z.enum(units)).optional(), picture: z.string().optional(),
 })
 
+/** Whom an assessor reads the quiz to; without it, one's own. */
+export const attemptBody = z.strictObject({ personId: id.optional() }).optional()
+
 /** What one item may be answered with, by its kind; which shape fits which item is the service's to check. */
 const answerValue = z.union([
   z.string().max(100), z.number(), z.array(z.string().max(64)).max(20),
@@ -78,6 +81,8 @@ export const attemptView = startedAttempt.extend({
   /** Until it ends, by the server's clock: a phone's own may be wrong. */
   secondsLeft: z.number().int(),
   answers: z.record(z.string(), z.unknown()).optional(), result: attemptResultView.optional(),
+  /** Who reads it aloud, and to whom when that is somebody else than the one who asks. */
+  readBy: z.string().optional(), person: z.object({ id: z.string(), name: z.string() }).optional(),
 })
 export type AttemptView = z.infer<typeof attemptView>
 

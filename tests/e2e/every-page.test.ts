@@ -38,14 +38,18 @@ const visits: Visit[] = [
   { page: 'people/[id].vue', as: 'foreman', path: ids => `/people/${ids.person}` },
   { page: 'people/index.vue', as: 'office', path: () => '/people' },
   { page: 'people/new.vue', as: 'office', path: () => '/people/new' },
+  { page: 'questions.vue', as: 'installer', path: () => '/questions' },
   { page: 'requirements.vue', as: 'safety', path: () => '/requirements' },
   { page: 'reset/[token].vue', as: 'nobody', path: ids => ids.reset },
   { page: 's/[siteCode].vue', as: 'nobody', path: ids => `/s/${ids.site}` },
+  { page: 'settings.vue', as: 'office', path: () => '/settings' },
   { page: 'setup.vue', as: 'nobody', path: () => '/setup' },
   { page: 'sign-in.vue', as: 'nobody', path: () => '/sign-in' },
   { page: 'sign-offs/[id].vue', as: 'foreman', path: ids => `/sign-offs/${ids.signOff}` },
   { page: 'sign-offs/index.vue', as: 'foreman', path: () => '/sign-offs' },
+  { page: 'sign-offs/read.vue', as: 'foreman', path: () => '/sign-offs/read' },
   { page: 'sites.vue', as: 'office', path: () => '/sites' },
+  { page: 'training-minutes.vue', as: 'safety', path: () => '/training-minutes' },
   { page: 'verify/[code].vue', as: 'nobody', path: ids => `/verify/${ids.card}` },
 ]
 interface List<Item> { items: Item[] }

@@ -222,6 +222,7 @@ describe('what the demo tells of the content', () => {
   it.each(taughtModules.map(module => [module.slug, module] as const))('names the lessons and steps of %s as the content has them', (slug, module) => {
     const files = readdirSync(resolve(import.meta.dirname, `../../content/en/modules/${slug}`)).filter(name => name !== 'index.md').sort()
     expect(files.map(name => name.replace(/^\d+\.|\.md$/g, ''))).toEqual(module.lessons)
+    expect(files.map(name => frontMatter(`content/en/modules/${slug}/${name}`).minutes)).toEqual(module.minutes)
     expect(frontMatter(`content/en/modules/${slug}/index.md`).checklist.map((step: { id: string }) => step.id)).toEqual(module.checklist)
   })
 
