@@ -6,13 +6,13 @@ const languages = [
   { code: 'es', language: 'es-US', name: 'Español' },
 ] as const
 /** One message file per part of the product, the same names in each language. */
-const messageFiles = ['common', 'sign-in', 'people', 'learn', 'training', 'briefing', 'credentials', 'records', 'errors']
+const messageFiles = ['common', 'sign-in', 'people', 'learn', 'training', 'kept', 'briefing', 'credentials', 'records', 'errors']
 
 /** The worker of exactly the pdf.js that vue-pdf-embed brings; another version refuses to talk to it. */
 const pdfWorker = dirname(createRequire(resolve('node_modules/vue-pdf-embed/dist/index.mjs')).resolve('pdfjs-dist/legacy/build/pdf.worker.min.mjs'))
 
 export default defineNuxtConfig({
-  modules: ['@nuxt/eslint', '@pinia/nuxt', '@nuxtjs/tailwindcss', '@nuxtjs/i18n', '@nuxt/content', 'nuxt-security', './modules/route-list'],
+  modules: ['@nuxt/eslint', '@pinia/nuxt', '@nuxtjs/tailwindcss', '@nuxtjs/i18n', '@nuxt/content', 'nuxt-security', '@vite-pwa/nuxt', './modules/route-list'],
   components: [
     { path: '~/components/content', global: true, pathPrefix: false },
     { path: '~/components' },
@@ -26,7 +26,11 @@ export default defineNuxtConfig({
         { name: 'theme-color', content: '#F5F4EF', media: '(prefers-color-scheme: light)' },
         { name: 'theme-color', content: '#14181A', media: '(prefers-color-scheme: dark)' },
       ],
-      link: [{ rel: 'icon', type: 'image/svg+xml', href: '/icon.svg' }],
+      link: [
+        { rel: 'icon', type: 'image/svg+xml', href: '/icon.svg' },
+        { rel: 'apple-touch-icon', href: '/apple-touch-icon.png' },
+        { rel: 'manifest', href: '/manifest.webmanifest' },
+      ],
     },
   },
   css: ['~/assets/css/main.css'],
@@ -81,6 +85,25 @@ export default defineNuxtConfig({
     defaultLocale: 'en',
     locales: languages.map(({ code, ...rest }) => ({ code, ...rest, files: messageFiles.map(file => `${code}/${file}.json`) })),
     detectBrowserLanguage: { useCookie: true, cookieKey: 'language', fallbackLocale: 'en' },
+  },
+  pwa: {
+    strategies: 'injectManifest',
+    srcDir: 'service-worker',
+    filename: 'sw.ts',
+    registerType: 'prompt',
+    injectManifest: { globPatterns: ['offline/index.html', 'icon*.{png,svg}'], globIgnores: ['**/pictures/**'] },
+    manifest: {
+      id: '/', name: 'Pourwright', short_name: 'Pourwright', start_url: '/', scope: '/', display: 'standalone',
+      description: 'Training, certification tracking and safety briefings for insulating-concrete-form crews.',
+      background_color: '#F5F4EF', theme_color: '#F5F4EF',
+      icons: [
+        { src: '/icon-192.png', sizes: '192x192', type: 'image/png' },
+        { src: '/icon-512.png', sizes: '512x512', type: 'image/png' },
+        { src: '/icon-maskable-512.png', sizes: '512x512', type: 'image/png', purpose: 'maskable' },
+      ],
+    },
+    // The worker is registered by plugins/service-worker.client.ts.
+    client: { registerPlugin: false },
   },
   security: {
     rateLimiter: false,

@@ -2,7 +2,7 @@ interface Problem { statusCode: number, code: string, fields: Record<string, str
 
 /** Turns what `$fetch` threw into words in the reader's language; `fields` says which fields are wrong. */
 export function useApiError() {
-  const { t, te } = useI18n()
+  const { t, te } = useNuxtApp().$i18n
 
   function toProblem(error: unknown): Problem {
     const { statusCode = 0, data } = (error ?? {}) as { statusCode?: number, data?: { message?: string, data?: Record<string, unknown> } }

@@ -21,6 +21,7 @@ export const useSessionStore = defineStore('session', () => {
   async function signOut() {
     await $fetch('/api/session', { method: 'DELETE' })
     person.value = null
+    await forgetKept()
     usePlaceStore().$reset()
     await navigateTo('/sign-in')
   }

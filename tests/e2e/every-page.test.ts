@@ -27,6 +27,7 @@ const visits: Visit[] = [
   { page: 'index.vue', as: 'foreman', path: () => '/' },
   { page: 'index.vue', as: 'safety', path: () => '/' },
   { page: 'join/[token].vue', as: 'nobody', path: ids => ids.join },
+  { page: 'kept.vue', as: 'installer', path: () => '/kept' },
   { page: 'learn/[module]/[lesson].vue', as: 'newHire', path: () => '/learn/stacking/level-and-plumb' },
   { page: 'learn/[module]/index.vue', as: 'newHire', path: () => '/learn/stacking' },
   { page: 'learn/[module]/quiz.vue', as: 'installer', path: () => '/learn/stacking/quiz' },
