@@ -19,11 +19,11 @@ export async function listSitesOfPerson(db: Db, personId: string, date: string):
 /** Somebody's name, and whether they work here on the date; undefined when there is no such person. */
 export async function findLearner(db: Db, id: string, date: string): Promise<{ id: string, name: string, isEmployed: boolean } | undefined> {
   const row = await db('people').where({ id }).first('id', 'name', 'hiredOn', 'leftOn')
-  return row && { id: row.id, name: row.name, isEmployed: row.hiredOn <= date && (row.leftOn === null || row.leftOn >= date) }
+  return row && { id: row.id, name: row.name, isEmployed: row.hiredOn <= date && (row.leftOn === null || row.leftOn > date) }
 }
 
 /** Everybody who works here on the date, by name, with the language they are taught in. */
 export async function listEmployedLearners(db: Db, date: string): Promise<{ id: string, name: string, language: Language }[]> {
-  return db('people').where('hiredOn', '<=', date).where(query => query.whereNull('leftOn').orWhere('leftOn', '>=', date))
+  return db('people').where('hiredOn', '<=', date).where(query => query.whereNull('leftOn').orWhere('leftOn', '>', date))
     .orderBy(['sortName', 'id']).select('id', 'name', 'language')
 }

@@ -49,7 +49,7 @@ export async function answerQuestion(db: Db, id: string, answered: { answer: str
 export async function listTrainers(db: Db, { module, date, exceptId }: { module: string, date: string, exceptId: string }): Promise<{ id: string, name: string, email: string | null, language: Language }[]> {
   const designated = db('designations').whereIn('kind', ['trainer', 'assessor']).where({ subject: module }).where('startsOn', '<=', date)
     .where(query => query.whereNull('endsOn').orWhere('endsOn', '>=', date)).select('personId')
-  return db('people').where('hiredOn', '<=', date).where(query => query.whereNull('leftOn').orWhere('leftOn', '>=', date)).whereNot('id', exceptId)
+  return db('people').where('hiredOn', '<=', date).where(query => query.whereNull('leftOn').orWhere('leftOn', '>', date)).whereNot('id', exceptId)
     .where(query => query.whereIn('id', designated).orWhere('role', 'safety'))
     .orderByRaw('role = \'safety\'').orderBy(['sortName', 'id']).select('id', 'name', 'email', 'language')
 }

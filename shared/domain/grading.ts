@@ -76,7 +76,7 @@ function shareOfPicks(picks: readonly string[], key: readonly string[]): number 
 }
 
 /** The share of the key's neighbouring pairs that stand next to each other, in that order, in the answer. */
-function shareOfNeighbours(picks: readonly string[], key: readonly string[]): number {
+export function shareOfNeighbours(picks: readonly string[], key: readonly string[]): number {
   const isWhole = picks.length === key.length && new Set(picks).size === picks.length && picks.every(id => key.includes(id))
   if (!isWhole) return 0
   if (key.length === 1) return 1

@@ -1,6 +1,6 @@
 import { idParams } from '#shared/schemas/common'
 import { crewView } from '#shared/schemas/crews-and-sites'
-import { readCrew } from '../../services/crews'
+import { readCrew } from '../../../services/crews'
 
 export default defineRoute({
   summary: 'One crew',

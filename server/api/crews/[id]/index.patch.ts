@@ -1,6 +1,6 @@
 import { idParams } from '#shared/schemas/common'
 import { crewChanges, crewView } from '#shared/schemas/crews-and-sites'
-import { changeCrew } from '../../services/crews'
+import { changeCrew } from '../../../services/crews'
 
 export default defineRoute({
   summary: 'Change a crew; duties replace all its usual slots',
