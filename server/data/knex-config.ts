@@ -40,10 +40,19 @@ export function knexConfigFor(filename: string): Knex.Config {
   }
 }
 
-/** Knex plucks from the raw row, before names are renamed: `pluck('siteId')` has to look for `site_id`. */
+interface Responding { processResponse: (query: { pluck?: string }, runner: unknown) => unknown }
+const renaming = new WeakSet<object>()
+
+/**
+ * Knex plucks from the raw row, before names are renamed: `pluck('siteId')` has to look for `site_id`. A transaction
+ * has a client of its own, so this is done once to what all clients share.
+ */
 export function renamePlucked(db: Knex): void {
-  const processResponse = db.client.processResponse as (query: { pluck?: string }, runner: unknown) => unknown
-  db.client.processResponse = function (query: { pluck?: string }, runner: unknown) {
+  const shared = Object.getPrototypeOf(db.client) as Responding
+  if (renaming.has(shared)) return
+  renaming.add(shared)
+  const { processResponse } = shared
+  shared.processResponse = function (query, runner) {
     if (query?.pluck) query.pluck = toSnake(query.pluck)
     return processResponse.call(this, query, runner)
   }
