@@ -100,6 +100,12 @@ export async function listModuleAttempts(db: Db, module: string): Promise<Attemp
   return (await db<AttemptRow>('attempts').where({ module }).whereNotNull('submittedAt').orderBy('submittedAt')).map(toAttempt)
 }
 
+/** How many graded attempts each module has. */
+export async function countModuleAttempts(db: Db): Promise<Map<string, number>> {
+  const rows: { module: string, count: number }[] = await db('attempts').whereNotNull('submittedAt').groupBy('module').select('module').count('* as count')
+  return new Map(rows.map(row => [row.module, Number(row.count)]))
+}
+
 /** Passed attempts, of these people, that no credential was issued from; in the order submitted. */
 export async function listUnusedPasses(db: Db, personIds: readonly string[], module?: string): Promise<{ id: string, personId: string, module: string, submittedAt: string }[]> {
   return db('attempts').whereIn('personId', personIds).where({ passed: true, ...(module && { module }) })
@@ -123,6 +129,11 @@ export async function gradeAttempt(db: Db, id: string, graded: { submittedAt: st
   const changed = await db('attempts').where({ id }).whereNull('submittedAt')
     .update({ submittedAt, answers: JSON.stringify(answers), result: JSON.stringify(result), score: result.score, passed: result.passed })
   return changed === 1
+}
+
+/** Writes that a failed attempt passes after all; false when it had not failed. A pass is never taken back. */
+export async function turnIntoPass(db: Db, id: string, result: StoredResult): Promise<boolean> {
+  return await db('attempts').where({ id, passed: false }).update({ result: JSON.stringify(result), score: result.score, passed: true }) === 1
 }
 
 /** Notes which credential an attempt completed. */

@@ -4,6 +4,7 @@ import * as dutiesAndCredentials from '../../migrations/0002_duties_and_credenti
 import * as learning from '../../migrations/0003_learning'
 import * as briefings from '../../migrations/0004_briefings'
 import * as mailAndAudit from '../../migrations/0005_mail_and_audit'
+import * as struckItems from '../../migrations/0006_struck_items'
 import * as teaching from '../../migrations/0008_teaching'
 
 /** Every migration, by the file name that the Knex command line records; a unit test keeps this equal to the folder. */
@@ -13,6 +14,7 @@ export const migrations: Record<string, Knex.Migration> = {
   '0003_learning.ts': learning,
   '0004_briefings.ts': briefings,
   '0005_mail_and_audit.ts': mailAndAudit,
+  '0006_struck_items.ts': struckItems,
   '0008_teaching.ts': teaching,
 }
 

@@ -15,6 +15,21 @@ const rank: Record<ClearanceState, number> = { notCleared: 0, learning: 1, clear
 /** Thrown to take the previewed change back. */
 class TakenBack extends Error {}
 
+/** Makes a change and takes it back: nothing is saved, what it answered is. A refused change is refused here too. */
+export async function tryOut<Answer>(db: Db, change: (trx: Db) => Promise<Answer>): Promise<Answer> {
+  let answer: { value: Answer } | undefined
+  try {
+    await db.transaction(async (trx) => {
+      answer = { value: await change(trx) }
+      throw new TakenBack()
+    })
+  }
+  catch (error) {
+    if (!(error instanceof TakenBack)) throw error
+  }
+  return answer!.value
+}
+
 /**
  * Makes a change, in one transaction; or, as a preview, makes it, asks whom it would stop and whom it would free,
  * and takes it back: nothing is saved. A refused change is refused by a preview too. `from` is the first day of
@@ -22,17 +37,12 @@ class TakenBack extends Error {}
  */
 export async function saveOrPreview<Saved>(work: Work, options: { preview?: boolean, from?: string }, change: (trx: Db) => Promise<Saved>): Promise<Saved | PreviewView> {
   if (!options.preview) return work.db.transaction(change)
-  let answer: PreviewView = { stops: [], frees: [] }
-  await work.db.transaction(async (trx) => {
+  return tryOut(work.db, async (trx) => {
     const questions = await questionsFor(trx, work.today, options.from)
     const before = await askAll(trx, questions)
     await change(trx)
-    answer = compare(questions, before, await askAll(trx, questions))
-    throw new TakenBack()
-  }).catch((error: unknown) => {
-    if (!(error instanceof TakenBack)) throw error
+    return compare(questions, before, await askAll(trx, questions))
   })
-  return answer
 }
 
 interface Question { personId: string, name: string, duties: string[] | null, siteId: string | null, date: string }

@@ -1,7 +1,7 @@
 import { randomUUID } from 'node:crypto'
 import { addMinutes, compareInstants, epochSecondsOf } from '#shared/domain/dates'
 import { drawAttempt } from '#shared/domain/drawing-of-items'
-import { attemptResult, toServedItem } from '#shared/domain/grading'
+import { attemptResult, passWithout, toServedItem } from '#shared/domain/grading'
 import type { Answer } from '#shared/domain/quiz-bank'
 import { quizOpening, type QuizOpening } from '#shared/domain/quiz-opening'
 import type { Language } from '#shared/domain/states'
@@ -11,6 +11,7 @@ import { findLearner } from '../data/assessors'
 import { findOwnAttempt, findRunningAttempt, gradeAttempt, insertAttempt, listGradedAttempts, setAttemptCredential, setLanguages, setReader, type Attempt, type Served } from '../data/attempts'
 import type { Db } from '../data/database'
 import { closeRequest } from '../data/sign-offs'
+import { listStruckIds } from '../data/struck-items'
 import { isAnswered, refuseUnreadable, rightOf } from './answers'
 import { randomToken } from './hashing'
 import { requireAssessable } from './assessing'
@@ -56,7 +57,7 @@ async function draw(trx: Db, work: Work, { taught, language, personId }: { taugh
   const items = new Map(taught.bank.items.map(item => [item.id, item]))
   const served: Served = {
     passMark: taught.bank.passMark,
-    items: drawAttempt(taught.bank, seed).flatMap(({ id, options }) => {
+    items: drawAttempt(taught.bank, seed, await listStruckIds(trx, taught.slug)).flatMap(({ id, options }) => {
       const item = items.get(id)
       return item ? [{ item, options }] : []
     }),
@@ -106,7 +107,7 @@ function toResult(attempt: Attempt, language: Language): AttemptResultView | und
       const item = items.get(id)
       if (!item) return []
       const hasAnswer = isAnswered(answers?.[id])
-      return [{ id, share, lesson: item.lesson, feedback: (hasAnswer ? item.feedback : notAnswered)[language], ...(hasAnswer && { right: rightOf(item) }) }]
+      return [{ id, share, lesson: item.lesson, feedback: (hasAnswer ? item.feedback : notAnswered)[language], ...(hasAnswer && { right: rightOf(item) }), ...(result.struck?.includes(id) && { isStruck: true }) }]
     }),
     ...(result.credentialId && { credentialId: result.credentialId }),
   }
@@ -130,7 +131,7 @@ export async function readAttempt(work: Work, id: string, language: Language): P
 /**
  * Grades an attempt, once: a second submit answers the first result. The languages it was started and sent in are kept. 404 for others' attempts, 409 `ended` from
  * its end on. A number that can't be read is refused and nothing is graded. A pass issues the credential when
- * nothing else is missing.
+ * nothing else is missing. An item struck since the start is taken out where that makes a fail a pass.
  */
 export async function submitAttempt(work: Work, teaching: Teaching, { id, answers, language }: SubmissionBody & { id: string, language: Language }): Promise<AttemptResultView> {
   const { db, actor, now } = work
@@ -144,7 +145,7 @@ export async function submitAttempt(work: Work, teaching: Teaching, { id, answer
     const given = new Map<string, Answer>(items.flatMap(item => isAnswered(answers[item.id]) ? [[item.id, answers[item.id] as Answer]] : []))
     const graded = attemptResult({ items, answers: given, passMark: attempt.served.passMark })
     refuseUnreadable(items, given, graded.items)
-    const result = { ...graded, credentialId: null }
+    const result = { ...passWithout(graded, await listStruckIds(trx, attempt.module), { items, passMark: attempt.served.passMark }), credentialId: null }
     await gradeAttempt(trx, id, { submittedAt: now, answers: Object.fromEntries(given), result })
     if (!attempt.languages.includes(language)) await setLanguages(trx, id, [...attempt.languages, language])
     await countQuiz(trx, work, { personId: attempt.personId, module: attempt.module, startedAt: attempt.startedAt, most: ATTEMPT_MINUTES })

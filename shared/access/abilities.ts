@@ -43,6 +43,7 @@ const holders = {
   'signOff.give': [...leads, 'safety'],
   'trainingMinutes.read': ['safety', 'admin'],
   'itemReview.read': ['safety'],
+  'itemReview.strike': ['safety'],
   'briefing.run': [...leads, 'safety'],
   'briefing.read': everybody,
   'imports.run': ['admin'],

@@ -19,6 +19,8 @@ export interface AttemptResult {
   /** Ids of must-know items that were not wholly right, in the order served. */
   mustKnowMissed: string[]
   items: ItemGrade[]
+  /** Items that were taken out of this result: they stand in `items`, and count for nothing. */
+  struck?: string[]
 }
 
 /** Closer than this, a score counts as on the pass mark: binary fractions cannot write 0.8. */
@@ -60,7 +62,25 @@ export function gradeItem(item: BankItem, answer: Answer | null | undefined): It
 export function attemptResult(
   { items, answers, passMark }: { items: readonly BankItem[], answers: ReadonlyMap<string, Answer>, passMark: number },
 ): AttemptResult {
-  const grades = items.map(item => gradeItem(item, answers.get(item.id)))
+  return judge(items, items.map(item => gradeItem(item, answers.get(item.id))), passMark)
+}
+
+/**
+ * A failed result without its struck items, when that makes it a pass; in every other case the result as it is. Taking
+ * a question out never turns a pass into a fail, and never changes the score of an attempt that fails anyway.
+ */
+export function passWithout(
+  result: AttemptResult, struck: ReadonlySet<string>, { items, passMark }: { items: readonly BankItem[], passMark: number },
+): AttemptResult {
+  const out = items.filter(item => struck.has(item.id)).map(item => item.id)
+  if (result.passed || out.length === 0) return result
+  const kept = items.filter(item => !struck.has(item.id))
+  const grades = kept.map(item => result.items.find(grade => grade.id === item.id) ?? { id: item.id, share: 0 })
+  const regraded = judge(kept, grades, passMark)
+  return regraded.passed ? { ...regraded, items: result.items, struck: out } : result
+}
+
+function judge(items: readonly BankItem[], grades: ItemGrade[], passMark: number): AttemptResult {
   const total = grades.reduce((sum, grade) => sum + grade.share, 0)
   const score = items.length === 0 ? 0 : Math.min(1, total / items.length)
   const mustKnowMissed = items.filter((item, index) => item.mustKnow && (grades[index]?.share ?? 0) < 1).map(item => item.id)

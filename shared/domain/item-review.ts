@@ -61,6 +61,8 @@ export function correlation(left: readonly number[], right: readonly number[]): 
  * Cronbach's alpha (KR-20 when every share is 0 or 1) from the mean variance of an item and the mean covariance of a
  * pair, each over the attempts that were served both, so that attempts with different items count too; with
  * the same items in every attempt it is the textbook figure. The length is the mean number of items in an attempt.
+ * Null where it can't be told: nothing varies, or the pairs are too few to fit together (their variance comes out
+ * negative).
  */
 export function alphaOf(attempts: readonly ReviewedAttempt[]): number | null {
   const shares = new Map<string, Map<number, number>>()
@@ -79,7 +81,7 @@ export function alphaOf(attempts: readonly ReviewedAttempt[]): number | null {
   const length = mean(attempts.map(attempt => attempt.items.length))
   const [variance, shared] = [mean(variances), mean(covariances)]
   const spread = variance + (length - 1) * shared
-  return Math.abs(spread) < 1e-12 ? null : length * shared / spread
+  return spread < 1e-12 ? null : length * shared / spread
 }
 
 function flagsOf({ served, p, itemRest }: Pick<ItemFigures, 'served' | 'p' | 'itemRest'>): ItemFlag[] {
@@ -92,12 +94,16 @@ function flagsOf({ served, p, itemRest }: Pick<ItemFigures, 'served' | 'p' | 'it
   return flags
 }
 
-/** The figures of a module's items over its graded attempts; `ids` are the items to report, served or not. */
-export function reviewItems(ids: readonly string[], attempts: readonly ReviewedAttempt[]): QuizFigures {
+/**
+ * The figures of a module's items over its graded attempts; `ids` are the items to report, served or not. Struck items
+ * are reported too, but count neither in `alpha` nor in the rest that another item is held against: the figures are
+ * those of the quiz as it is drawn from now on.
+ */
+export function reviewItems(ids: readonly string[], attempts: readonly ReviewedAttempt[], struck: ReadonlySet<string> = new Set()): QuizFigures {
   const items = ids.map((id) => {
     const seen = attempts.flatMap((attempt) => {
       const own = attempt.items.find(item => item.id === id)
-      const rest = attempt.items.filter(item => item.id !== id)
+      const rest = attempt.items.filter(item => item.id !== id && !struck.has(item.id))
       return own ? [{ own, rest: rest.length === 0 ? 0 : mean(rest.map(item => item.share)) }] : []
     })
     const picks: Record<string, number> = {}
@@ -108,5 +114,5 @@ export function reviewItems(ids: readonly string[], attempts: readonly ReviewedA
     }
     return { id, ...figures, picks, flags: flagsOf(figures) }
   })
-  return { people: new Set(attempts.map(attempt => attempt.personId)).size, alpha: alphaOf(attempts), items }
+  return { people: new Set(attempts.map(attempt => attempt.personId)).size, alpha: alphaOf(struck.size === 0 ? attempts : attempts.map(attempt => ({ ...attempt, items: attempt.items.filter(item => !struck.has(item.id)) }))), items }
 }

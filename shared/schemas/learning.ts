@@ -1,6 +1,5 @@
 import { z } from 'zod'
 import { credentialStates, itemKinds, moduleStates } from '../domain/states'
-import { itemFlags } from '../domain/item-review'
 import { units } from '../domain/units'
 import { code, id, language, text } from './common'
 import { mark } from './mark'
@@ -68,7 +67,7 @@ export type SubmissionBody = z.infer<typeof submissionBody>
 const rightAnswer = z.union([z.string(), z.array(z.string()), z.object({ value: z.number(), unit: z.enum(units) })])
 export const attemptResultView = z.object({
   score: z.number(), passMark: z.number(), passed: z.boolean(), mustKnowMissed: z.array(z.string()),
-  items: z.array(z.object({ id: z.string(), share: z.number(), feedback: z.string(), lesson: z.string(), right: rightAnswer.optional() })),
+  items: z.array(z.object({ id: z.string(), share: z.number(), feedback: z.string(), lesson: z.string(), right: rightAnswer.optional(), isStruck: z.boolean().optional() })),
   credentialId: z.string().optional(),
 })
 export type AttemptResultView = z.infer<typeof attemptResultView>
@@ -102,9 +101,3 @@ export const signOffBody = z.strictObject({
 export type SignOffBody = z.infer<typeof signOffBody>
 export const signOffMade = z.object({ id: z.string(), passed: z.boolean(), credentialId: z.string().optional() })
 export type SignOffMade = z.infer<typeof signOffMade>
-
-export const itemReviewQuery = z.strictObject({ module: code })
-export const itemReviewView = z.object({
-  people: z.number().int(), alpha: z.number().nullable(),
-  items: z.array(z.object({ id: z.string(), served: z.number().int(), p: z.number(), itemRest: z.number().nullable(), picks: z.record(z.string(), z.number().int()), flags: z.array(z.enum(itemFlags)) })),
-})

@@ -27,6 +27,8 @@ const visits: Visit[] = [
   { page: 'index.vue', as: 'installer', path: () => '/' },
   { page: 'index.vue', as: 'foreman', path: () => '/' },
   { page: 'index.vue', as: 'safety', path: () => '/' },
+  { page: 'item-review/[item].vue', as: 'safety', path: () => '/item-review/stacking-01' },
+  { page: 'item-review/index.vue', as: 'safety', path: () => '/item-review?module=stacking' },
   { page: 'join/[token].vue', as: 'nobody', path: ids => ids.join },
   { page: 'kept.vue', as: 'installer', path: () => '/kept' },
   { page: 'learn/[module]/[lesson].vue', as: 'newHire', path: () => '/learn/stacking/level-and-plumb' },

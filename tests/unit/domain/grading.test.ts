@@ -1,6 +1,6 @@
 import { describe, expect, it } from 'vitest'
 import fc from 'fast-check'
-import { attemptResult, gradeItem, toServedItem } from '#shared/domain/grading'
+import { attemptResult, gradeItem, passWithout, toServedItem } from '#shared/domain/grading'
 import { type Answer, type BankItem, keyProblem } from '#shared/domain/quiz-bank'
 import { aBank, aNumber, anAll, anOrder, aOne, aPlace } from './builders/items'
 
@@ -178,6 +178,39 @@ describe('for any answer', () => {
     fc.assert(fc.property(fc.shuffledSubarray(['a', 'b', 'c', 'd', 'e']), (picks) => {
       expect(share(anOrder(), picks) === 1).toBe(picks.join() === 'c,a,d,b,e')
       expect(share(anAll(), picks) === 1).toBe([...picks].sort().join() === 'a,c,d')
+    }))
+  })
+})
+
+describe('a result without struck items', () => {
+  const items = [aOne({ id: 'must', mustKnow: true }), ...['a', 'b', 'c', 'd'].map(id => aOne({ id }))]
+  const graded = (wrong: string[]) => attemptResult({ items, answers: new Map(items.map(item => [item.id, wrong.includes(item.id) ? 'a' : 'b'])), passMark: 0.8 })
+  const without = (wrong: string[], ...struck: string[]) => passWithout(graded(wrong), new Set(struck), { items, passMark: 0.8 })
+
+  it('becomes a pass when only a struck must-know item was in the way, and still shows the item', () => {
+    const result = without(['must'], 'must')
+    expect(result).toMatchObject({ passed: true, score: 1, mustKnowMissed: [], struck: ['must'] })
+    expect(result.items).toEqual(graded(['must']).items)
+  })
+
+  it('becomes a pass when the score of the others is enough', () => {
+    expect(graded(['a', 'b'])).toMatchObject({ passed: false, score: 0.6 })
+    expect(without(['a', 'b'], 'a')).toMatchObject({ passed: false, score: 0.6 })
+    expect(without(['a', 'b'], 'a', 'b')).toMatchObject({ passed: true, score: 1, struck: ['a', 'b'] })
+  })
+
+  it('stays as it was while it fails, when it passed, when the item was not served, and when nothing is left', () => {
+    expect(without(['must', 'a'], 'a')).toEqual(graded(['must', 'a']))
+    expect(without(['a'], 'b')).toEqual(graded(['a']))
+    expect(without(['must'], 'elsewhere')).toEqual(graded(['must']))
+    expect(without(['must'], 'must', 'a', 'b', 'c', 'd')).toEqual(graded(['must']))
+  })
+
+  it('never turns a pass into a fail, nor takes from a score, whatever is struck', () => {
+    fc.assert(fc.property(fc.subarray(items.map(item => item.id)), fc.subarray(items.map(item => item.id)), (wrong, struck) => {
+      const [before, after] = [graded(wrong), without(wrong, ...struck)]
+      expect(Number(after.passed)).toBeGreaterThanOrEqual(Number(before.passed))
+      expect(after.score).toBeGreaterThanOrEqual(before.score)
     }))
   })
 })

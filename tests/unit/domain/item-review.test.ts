@@ -31,6 +31,15 @@ describe('the review of items', () => {
     expect(reviewItems(['a'], matrix(...times(30, [1, 1]))).items[0]?.flags).toEqual(['tooEasy'])
   })
 
+  it('holds items against the rest without the struck ones, and still reports those', () => {
+    const rows = [[1, 1, 1, 0], [1, 1, 0, 1], [1, 0, 0, 0], [0, 0, 0, 1]]
+    const figures = reviewItems(['a', 'd'], matrix(...rows), new Set(['d']))
+    const without = reviewItems(['a'], matrix(...rows.map(row => row.slice(0, 3))))
+    expect(figures.alpha).toBeCloseTo(without.alpha!, 12)
+    expect(figures.items[0]!.itemRest).toBeCloseTo(without.items[0]!.itemRest!, 12)
+    expect(figures.items[1]).toMatchObject({ id: 'd', served: 4, p: 0.5 })
+  })
+
   it('suspects the key where those who know the rest get the item wrong', () => {
     const { items } = reviewItems(['a'], matrix(...times(15, [0, 1, 1]), ...times(15, [1, 0, 0])))
     expect(items[0]).toMatchObject({ served: 30, p: 0.5, itemRest: -1, picks: { x: 15 }, flags: ['keyMayBeWrong'] })

@@ -1,9 +1,0 @@
-import { itemReviewQuery, itemReviewView } from '#shared/schemas/learning'
-import { reviewModuleItems } from '../services/item-review'
-
-export default defineRoute({
-  summary: 'How a module\'s quiz items did over every graded attempt',
-  ability: 'itemReview.read',
-  query: itemReviewQuery,
-  answer: itemReviewView,
-}, async ({ work, query, event }) => reviewModuleItems(work, await getTeaching(event), query.module))
