@@ -6,7 +6,7 @@ const languages = [
   { code: 'es', language: 'es-US', name: 'Español' },
 ] as const
 /** One message file per part of the product, the same names in each language. */
-const messageFiles = ['common', 'sign-in', 'people', 'learn', 'training', 'kept', 'item-review', 'briefing', 'credentials', 'records', 'errors']
+const messageFiles = ['common', 'sign-in', 'people', 'learn', 'training', 'kept', 'talks', 'item-review', 'briefing', 'credentials', 'records', 'errors']
 
 /** The worker of exactly the pdf.js that vue-pdf-embed brings; another version refuses to talk to it. */
 const pdfWorker = dirname(createRequire(resolve('node_modules/vue-pdf-embed/dist/index.mjs')).resolve('pdfjs-dist/legacy/build/pdf.worker.min.mjs'))
@@ -72,6 +72,15 @@ export default defineNuxtConfig({
   typescript: { strict: true, typeCheck: false },
   telemetry: false,
   hooks: {
+    // A lesson would otherwise fetch every drawing of the product ahead. Links still fetch their page when they come into view.
+    'build:manifest': (manifest) => {
+      for (const chunk of Object.values(manifest)) {
+        chunk.dynamicImports = []
+        chunk.prefetch = false
+        // Letters beyond Latin 1 are fetched when a page has some.
+        if (/latin-ext|mono/.test(chunk.file ?? '')) chunk.preload = false
+      }
+    },
     // Content writes every collection into a public dump; nothing of it may be prerendered or served (see server/middleware/0.content-gate.ts).
     'nitro:config': (config) => {
       for (const [path, rules] of Object.entries(config.routeRules ?? {})) {

@@ -6,6 +6,7 @@ import * as briefings from '../../migrations/0004_briefings'
 import * as mailAndAudit from '../../migrations/0005_mail_and_audit'
 import * as struckItems from '../../migrations/0006_struck_items'
 import * as teaching from '../../migrations/0008_teaching'
+import * as companyTexts from '../../migrations/0009_company_texts'
 
 /** Every migration, by the file name that the Knex command line records; a unit test keeps this equal to the folder. */
 export const migrations: Record<string, Knex.Migration> = {
@@ -16,6 +17,7 @@ export const migrations: Record<string, Knex.Migration> = {
   '0005_mail_and_audit.ts': mailAndAudit,
   '0006_struck_items.ts': struckItems,
   '0008_teaching.ts': teaching,
+  '0009_company_texts.ts': companyTexts,
 }
 
 /** Knex reads migrations from here, because a built server has no migrations folder. */

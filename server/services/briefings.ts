@@ -74,7 +74,7 @@ function baseView(work: Work, briefing: BriefingWithSite, talks: Talks) {
   const known = talks.get(talk)
   return {
     id, siteId, site: { id: site.id, code: site.code, name: site.name, timeZone: site.timeZone }, date: localDate, talk,
-    talkTitle: { en: talkVersions.en.title, es: talkVersions.es.title }, check: known ? toCheckView(known.check) : null,
+    talkTitle: { en: talkVersions.en.title, es: talkVersions.es.title }, talkHash: known?.isCompany || known?.hash.en === talkVersions.en.hash ? talkVersions.en.hash : null, check: known ? toCheckView(known.check) : null,
     state: stateOf(briefing), work: briefing.work, openedAt, closedAt, sealedAt, runBy: { id: briefing.runBy, name: briefing.runByName },
     withoutSignal: briefing.withoutSignal, markAsked: work.company.markAsked,
   }

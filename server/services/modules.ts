@@ -5,6 +5,7 @@ import type { LessonView, ModuleLine, ModuleView, WallView } from '#shared/schem
 import { findRunningAttempt, listGradedAttempts } from '../data/attempts'
 import { recordLessonRead } from '../data/lesson-reads'
 import { findLastSignOff, findOpenRequest, listUnusedSignOffs } from '../data/sign-offs'
+import { shownNote } from './company-texts'
 import { progressOf, type Progress } from './learning-progress'
 import { openingOf } from './quiz'
 import { notFound } from './refusal'
@@ -61,8 +62,9 @@ export async function readModule(work: Work, teaching: Teaching, { slug, languag
   const progress = await progressOf(work.db, work, teaching, work.actor.personId)
   const held = progress.credentials.find(credential => credential.module === slug)
   const text = taught?.text[language]
+  const note = await shownNote(work.db, slug, language)
   return {
-    ...toLine(module, taught, progress, language),
+    ...toLine(module, taught, progress, language), ...(note && { note }),
     summary: text?.summary ?? '', cautions: text?.cautions ?? [], checklist: text?.checklist ?? [], sources: text?.sources ?? [],
     ...(taught && { quiz: await quizOf(work, taught, progress) }),
     ...(text && text.checklist.length > 0 && { handsOn: await handsOnOf(work, slug) }),

@@ -23,6 +23,8 @@ export interface Talk extends TalkTags {
   text: Record<Language, TalkText>
   hash: Record<Language, string>
   check: TalkCheck
+  /** Written by the company, not shipped. */
+  isCompany?: boolean
 }
 
 /** Every talk by its slug. */
@@ -56,7 +58,7 @@ export const toCheckView = ({ question, options }: TalkCheck): BilingualCheck =>
 export function toListItem(talk: Talk, language: Language): TalksView['items'][number] {
   const { question, options } = talk.check
   return {
-    slug: talk.slug, title: talk.text[language].title, minutes: talk.minutes, tags: [...talk.work, ...talk.hazards],
+    slug: talk.slug, title: talk.text[language].title, minutes: talk.minutes, tags: [...talk.work, ...talk.hazards], isCompany: talk.isCompany ?? false, seasons: [...talk.seasons],
     check: { question: question[language], options: options.map(option => ({ id: option.id, text: option.text[language] })) },
   }
 }
@@ -65,7 +67,7 @@ export function toListItem(talk: Talk, language: Language): TalksView['items'][n
 export function toTalkView(talk: Talk): TalkView {
   const { en, es } = talk.text
   return {
-    slug: talk.slug, minutes: talk.minutes, work: [...talk.work], hazards: [...talk.hazards], title: { en: en.title, es: es.title },
+    slug: talk.slug, minutes: talk.minutes, work: [...talk.work], hazards: [...talk.hazards], isCompany: talk.isCompany ?? false, title: { en: en.title, es: es.title },
     sources: { en: en.sources, es: es.sources }, body: { en: en.body, es: es.body }, check: toCheckView(talk.check),
   }
 }

@@ -1,5 +1,6 @@
 import type { H3Event } from 'h3'
 import { queryCollection } from '@nuxt/content/server'
+import { withCompanyTalks } from '../services/company-texts'
 import { parseChecks, toTalk, type Talk, type Talks, type TalkText } from '../services/talks'
 
 let reading: Promise<Talks> | undefined
@@ -23,8 +24,12 @@ async function load(event: H3Event): Promise<Talks> {
   return talks
 }
 
-/** Every talk, read once per process: content changes only with a new build. */
-export function readTalks(event: H3Event): Promise<Talks> {
+/** Every talk: the shipped ones, read once per process because content changes only with a new build, and the company's own. */
+export async function readTalks(event: H3Event): Promise<Talks> {
+  return withCompanyTalks(event.context.db, await readShippedTalks(event))
+}
+
+function readShippedTalks(event: H3Event): Promise<Talks> {
   return reading ??= load(event).catch((error: unknown) => {
     reading = undefined
     throw error

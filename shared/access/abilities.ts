@@ -41,6 +41,7 @@ const holders = {
   'clearance.read': ['foreman', 'superintendent', 'safety', 'admin'],
   'learning.own': everybody,
   'signOff.give': [...leads, 'safety'],
+  'companyTexts.write': ['safety'],
   'trainingMinutes.read': ['safety', 'admin'],
   'itemReview.read': ['safety'],
   'itemReview.strike': ['safety'],

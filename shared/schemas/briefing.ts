@@ -86,6 +86,8 @@ export const briefingView = z.object({
   date: z.string(),
   talk: z.string(),
   talkTitle: bilingual,
+  /** The hash of the text that was read, when that text is still at hand; null otherwise. */
+  talkHash: z.string().nullable(),
   check: bilingualCheck.nullable(),
   state: z.enum(briefingStates),
   work: z.array(z.enum(workTags)),

@@ -24,6 +24,8 @@ export type WallView = z.infer<typeof wallView>
 
 const step = z.object({ id: z.string(), text: z.string() })
 export const moduleView = moduleLine.extend({
+  /** The company's own note, as a tree for `<ContentRenderer>`. */
+  note: z.unknown().optional(),
   summary: z.string(), cautions: z.array(z.string()), checklist: z.array(step), sources: z.array(z.string()),
   quiz: z.object({
     items: z.number().int(), passMark: z.number(), isOpen: z.boolean(),

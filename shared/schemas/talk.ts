@@ -15,6 +15,9 @@ export const talkListItem = z.object({
   title: z.string(),
   minutes: z.number().int(),
   tags: z.array(z.string()),
+  /** Written by the company, not shipped. */
+  isCompany: z.boolean(),
+  seasons: z.array(z.string()),
   check: checkView,
 })
 export const talksQuery = z.strictObject({ language: language.optional() })
@@ -27,12 +30,15 @@ export const talkView = z.object({
   minutes: z.number().int(),
   work: z.array(z.string()),
   hazards: z.array(z.string()),
+  isCompany: z.boolean(),
   title: bilingual,
   sources: z.object({ en: z.array(z.string()), es: z.array(z.string()) }),
   body: z.object({ en: z.unknown(), es: z.unknown() }),
   check: bilingualCheck,
 })
 export type TalkView = z.infer<typeof talkView>
+/** A talk as it was read: the hash that its briefing kept. */
+export const talkQuery = z.strictObject({ hash: z.string().regex(/^[0-9a-f]{64}$/).optional() })
 export const talkParams = z.strictObject({ slug: code })
 
 /** `stack,brace` in a query string. */

@@ -8,6 +8,7 @@ import { buildWhenStale } from '../../scripts/steps.mjs'
 import { createClient, signedIn } from '../support/client'
 import { freePort, startServer } from '../support/server'
 import { measure, type Measured } from './load'
+import { openBenchBrowser, slowPhone, weighPage } from './pages'
 
 /*
  * Figures as ratios to an empty app of the same framework, both measured in one run on this machine:
@@ -71,11 +72,26 @@ async function benchSignIns(origin: string, bareOrigin: string, count: number) {
   console.log(`sign-ins run at ${(product.perSecond / bare.perSecond).toFixed(3)} of the bare route; p50 ${(product.p50 / bare.p50).toFixed(1)} times, p99 ${(product.p99 / bare.p99).toFixed(1)} times\n`)
 }
 
+/** What a phone loads and how long until it can be read, against an empty page of the same framework. */
+async function benchPages(origin: string, bareOrigin: string) {
+  const browser = await openBenchBrowser()
+  const empty = await weighPage(browser, bareOrigin, '/')
+  console.log(`\nSlow phone: processor ${slowPhone.slowerBy} times slower, ${slowPhone.bytesPerSecond * 8 / 1000} kbit/s, ${slowPhone.roundTripMs} ms round trip, empty cache`)
+  console.log(`an empty page${' '.repeat(31)} ${(empty.transferred / 1024).toFixed(0).padStart(5)} KB  ${(empty.readableMs / 1000).toFixed(1)} s`)
+  const installer = { email: 'installer@cedarhollow.example', password: 'running-bond' }
+  for (const [path, who] of [['/learn/stacking/level-and-plumb', installer], ['/learn/pour-rate/the-strictest-limit', installer], ['/sign-in', undefined], ['/s/nowhere', undefined]] as const) {
+    const own = await weighPage(browser, origin, path, who)
+    console.log(`${path.padEnd(44)} ${(own.transferred / 1024).toFixed(0).padStart(5)} KB  ${(own.readableMs / 1000).toFixed(1)} s   ${(own.transferred / empty.transferred).toFixed(2)} times the bytes, ${(own.readableMs / empty.readableMs).toFixed(2)} times the time`)
+  }
+  await browser.close()
+}
+
 buildWhenStale()
 const bare = await startBare()
 const product = await startServer({ env: { NUXT_DEMO: 'true' } })
 try {
   await benchSignIns(product.origin, bare.origin, Number(process.env.BENCH_COUNT ?? 1000))
+  await benchPages(product.origin, bare.origin)
   const empty = await scriptBytes(bare.origin, '/')
   for (const path of ['/sign-in', '/s/nowhere']) {
     const own = await scriptBytes(product.origin, path)

@@ -6,7 +6,7 @@ import { filesBelow } from '../support/project-files'
 
 type Who = DemoPerson | 'nobody'
 interface Visit { page: string, as: Who, path: (ids: Ids) => string, sizes?: ('narrow' | 'desk')[] }
-interface Ids { person: string, credential: string, briefing: string, signOff: string, site: string, hash: string, card: string, join: string, reset: string }
+interface Ids { person: string, credential: string, briefing: string, signOff: string, site: string, hash: string, card: string, talk: string, join: string, reset: string }
 
 /** Every page of the product, by its file, and who looks at it. */
 const visits: Visit[] = [
@@ -33,6 +33,7 @@ const visits: Visit[] = [
   { page: 'kept.vue', as: 'installer', path: () => '/kept' },
   { page: 'learn/[module]/[lesson].vue', as: 'newHire', path: () => '/learn/stacking/level-and-plumb' },
   { page: 'learn/[module]/index.vue', as: 'newHire', path: () => '/learn/stacking' },
+  { page: 'learn/[module]/note.vue', as: 'safety', path: () => '/learn/stacking/note' },
   { page: 'learn/[module]/quiz.vue', as: 'installer', path: () => '/learn/stacking/quiz' },
   { page: 'learn/index.vue', as: 'newHire', path: () => '/learn' },
   { page: 'mail.vue', as: 'office', path: () => '/mail' },
@@ -53,6 +54,10 @@ const visits: Visit[] = [
   { page: 'sign-offs/index.vue', as: 'foreman', path: () => '/sign-offs' },
   { page: 'sign-offs/read.vue', as: 'foreman', path: () => '/sign-offs/read' },
   { page: 'sites.vue', as: 'office', path: () => '/sites' },
+  { page: 'talks/[slug]/edit.vue', as: 'safety', path: ids => `/talks/${ids.talk}/edit` },
+  { page: 'talks/[slug]/index.vue', as: 'foreman', path: () => '/talks/hose-whip' },
+  { page: 'talks/index.vue', as: 'foreman', path: () => '/talks?work=pour' },
+  { page: 'talks/write.vue', as: 'safety', path: () => '/talks/write?from=hose-whip' },
   { page: 'training-minutes.vue', as: 'safety', path: () => '/training-minutes' },
   { page: 'verify/[code].vue', as: 'nobody', path: ids => `/verify/${ids.card}` },
 ]
@@ -71,7 +76,8 @@ async function findIds(): Promise<Ids> {
   const person = (await safety.get<List<{ id: string }>>(`/api/people?q=2041`)).body.items[0]!
   const newcomer = (await office.post<{ id: string }>('/api/people', { name: 'Nadia Link', badge: `N${Date.now()}` })).body
   const join = (await office.post<{ url: string }>(`/api/people/${newcomer.id}/join-link`)).body
-  return { person: person.id, credential: own.id, briefing: sealed.id, signOff: requests[0]!.id, site: sites[0]!.code, hash: sheet.hash, card: card.cardCode ?? card.code ?? 'NONE', join: new URL(join.url).pathname, reset: '/reset/this-link-has-been-used-long-ago' }
+  const talk = (await safety.post<{ slug: string }>('/api/company-talks', { title: { en: 'Our gate', es: 'Nuestra entrada' }, minutes: 5, work: ['drive'], hazards: ['traffic'], seasons: [], text: { en: '## Ask first\n\nWho opens the gate?', es: '## Pregunte primero\n\n¿Quién abre?' }, sources: ['Company rule'], check: { question: { en: 'Who?', es: '¿Quién?' }, options: ['a', 'b', 'c'].map(id => ({ id, text: { en: `Person ${id}`, es: `Persona ${id}` } })), right: 'a', explain: { en: 'The one named.', es: 'La persona nombrada.' } } })).body.slug
+  return { person: person.id, talk, credential: own.id, briefing: sealed.id, signOff: requests[0]!.id, site: sites[0]!.code, hash: sheet.hash, card: card.cardCode ?? card.code ?? 'NONE', join: new URL(join.url).pathname, reset: '/reset/this-link-has-been-used-long-ago' }
 }
 
 describe('every page', () => {
