@@ -1,5 +1,5 @@
-/** Reads a part of the page with the device's own voice; `isAvailable` only where it has one. */
-export function useReadAloud(part: () => HTMLElement | null) {
+/** Reads a part of the page with the device's own voice, in the page's language unless said; `isAvailable` only where it has one. */
+export function useReadAloud(part: () => HTMLElement | null, language?: () => 'en' | 'es') {
   const { locale } = useI18n()
   const isAvailable = ref(false)
   const isReading = ref(false)
@@ -11,11 +11,11 @@ export function useReadAloud(part: () => HTMLElement | null) {
   }
   /** One utterance a paragraph: some voices stop by themselves in the middle of a long one. */
   function start() {
-    const texts = [...part()?.querySelectorAll('h2, p, li, figcaption') ?? []].filter(node => !node.parentElement?.closest('li, figcaption')).map(node => node.textContent?.trim() ?? '').filter(Boolean)
+    const texts = [...part()?.querySelectorAll('h1, h2, p, li, label, figcaption') ?? []].filter(node => !node.parentElement?.closest('li, label, figcaption')).map(node => node.textContent?.trim() ?? '').filter(Boolean)
     stop()
     texts.forEach((text, index) => {
       const words = new SpeechSynthesisUtterance(text)
-      words.lang = locale.value === 'es' ? 'es-US' : 'en-US'
+      words.lang = (language?.() ?? locale.value) === 'es' ? 'es-US' : 'en-US'
       if (index === texts.length - 1) words.onend = () => (isReading.value = false)
       speechSynthesis.speak(words)
     })

@@ -38,3 +38,6 @@ export function numbersIn(text: string): string[] {
   const plain = text.replace(/^\s*\d+\.\s/gm, '').replace(/(\d),(\d{3})/g, '$1$2')
   return [...plain.matchAll(/\d+(?:[./]\d+)*(?:\s\d+\/\d+)?(?:\s?(?:lb\/ft²|lb\/ft³|lb\/in²|yd³|ft²|°F|mph|psi|ft|in|lb|kV|%))?(?![\p{L}\d])/gu)].map(match => match[0].replace(/\s/g, ' '))
 }
+
+/** What a number that could be acted on stands beside: where it comes from. */
+export const hasSource = /\b(CFR|IRC|ACI|ASTM|UFGS|CCR|OSHA|practice|práctica|source|fuente|memory|memoria|computed|calculado|guidance|guía|maker|fabricante|pour card|tarjeta de colado|Weather Service|Servicio Meteorológico|trade journal|safety data|hoja de seguridad|chart|tabla)\b/i

@@ -3,15 +3,13 @@ import { resolve } from 'node:path'
 import { describe, expect, it } from 'vitest'
 import { modules } from '#shared/domain/curriculum'
 import { itemKinds } from '#shared/domain/states'
-import { drawingFile, drawingsIn, lessonsOf, listContent, numbersIn, piecesIn, readContent } from '../../support/content-files'
+import { drawingFile, drawingsIn, hasSource, lessonsOf, listContent, numbersIn, piecesIn, readContent } from '../../support/content-files'
 import { readRealBanks } from '../../support/teaching'
 
 const banks = new Map(readRealBanks().map(bank => [bank.module, bank]))
 const headings = { en: ['Why it hurts', 'Do it like this', 'Stop if'], es: ['Por qué lastima', 'Hágalo así', 'Alto si'] }
 const headingsOf = (body: string) => [...body.matchAll(/^## (.+)$/gm)].map(match => match[1])
 const sorted = (list: readonly string[]) => [...list].sort()
-/** What a number that could be acted on stands beside: where it comes from. */
-const hasSource = /\(.*(CFR|IRC|ACI|ASTM|UFGS|CCR|OSHA|NWS|practice|práctica|source|fuente|memory|memoria|computed|calculado|guidance|guía|maker|fabricante|card|tarjeta|trade|oficio|law|ley).*\)/i
 
 describe('the training wall', () => {
   it('has content and a bank for each of its 16 modules, and none besides', () => {

@@ -3,7 +3,7 @@ import { resolve } from 'node:path'
 import { describe, expect, it } from 'vitest'
 import { parse } from 'yaml'
 import { talkHazards, workTags } from '#shared/domain/states'
-import { listContent, numbersIn, readContent } from '../../support/content-files'
+import { hasSource, listContent, numbersIn, readContent } from '../../support/content-files'
 
 interface Check { question: { en: string, es: string }, options: { id: string, text: { en: string, es: string } }[], right: string, explain: { en: string, es: string } }
 const checks = parse(readFileSync(resolve(import.meta.dirname, '../../../server/assets/talk-checks.yaml'), 'utf8')) as Record<string, Check>
@@ -59,6 +59,11 @@ describe.each(slugs)('the talk %s', (slug) => {
 
   it('gives the same numbers in both languages', () => {
     expect(numbersIn(es.body).sort()).toEqual(numbersIn(en.body).sort())
+  })
+
+  it('names the source of its numbers with units, in the paragraph that has them', () => {
+    const bare = [en, es].flatMap(({ path, body }) => body.split(/\n\n/).filter(paragraph => numbersIn(paragraph).some(number => /\d\s?(lb|ft|°F|mph|psi|kV|yd)/.test(number)) && !hasSource.test(paragraph)).map(paragraph => `${path}: ${paragraph.slice(0, 90)}`))
+    expect(bare).toEqual([])
   })
 
   it('has a check question of three answers with its reason', () => {
