@@ -12,7 +12,8 @@ async function load(event: H3Event): Promise<Talks> {
     queryCollection(event, 'talksEn').all(), queryCollection(event, 'talksEs').all(), useStorage('assets:server').getItem<string>('talk-checks.yaml'),
   ])
   const checks = parseChecks(String(yaml))
-  const text = ({ title, minutes, work, hazards, seasons, sources, body }: TalkText): TalkText => ({ title, minutes, work, hazards, seasons, sources, body })
+  // The content database gives numbers back as text.
+  const text = ({ title, minutes, work, hazards, seasons, sources, body }: TalkText): TalkText => ({ title, minutes: Number(minutes), work, hazards, seasons, sources, body })
   const talks = new Map<string, Talk>()
   for (const page of english) {
     const slug = slugOf(page.path)

@@ -153,3 +153,12 @@ describe('learning over the API', () => {
     for (const path of ['/api/modules', '/api/modules/stacking', '/api/modules/stacking/lessons/stop-height', '/api/attempts/x', '/api/sign-off-requests']) expect((await stranger.get(path)).status).toBe(401)
   })
 })
+
+describe('the talk library', () => {
+  it('gives minutes as numbers, tags, and the question without its answer', async () => {
+    const foreman = await signedIn('foreman')
+    const { items } = (await foreman.get<{ items: { slug: string, minutes: unknown, tags: string[], check: Record<string, unknown> }[] }>('/api/talks?language=es')).body
+    expect(items.length).toBeGreaterThanOrEqual(48)
+    expect(items.filter(item => typeof item.minutes !== 'number' || item.tags.length === 0 || 'right' in item.check || 'explain' in item.check)).toEqual([])
+  })
+})
