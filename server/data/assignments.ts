@@ -1,3 +1,4 @@
+import { addDays } from '#shared/domain/dates'
 import type { Db } from './database'
 
 export interface Assignment {
@@ -43,4 +44,10 @@ export async function deleteAssignment(db: Db, id: string): Promise<void> {
 /** Ids of a crew's people, or the crew of a person, for the rule of one site a day. */
 export async function listCrewMembers(db: Db, crewId: string): Promise<{ id: string, name: string }[]> {
   return db('people').where({ crewId }).select('id', 'name')
+}
+
+/** The days between two dates on which a roster changes: the first day of an assignment, and the day after its last. */
+export async function listAssignmentDays(db: Db, from: string, to: string): Promise<string[]> {
+  const rows: { startsOn: string, endsOn: string | null }[] = await db('assignments').where('startsOn', '<=', to).where(query => query.whereNull('endsOn').orWhere('endsOn', '>=', from)).select('startsOn', 'endsOn')
+  return [...new Set(rows.flatMap(row => [row.startsOn, ...(row.endsOn ? [addDays(row.endsOn, 1)] : [])]))]
 }

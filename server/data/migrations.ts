@@ -7,6 +7,7 @@ import * as mailAndAudit from '../../migrations/0005_mail_and_audit'
 import * as struckItems from '../../migrations/0006_struck_items'
 import * as teaching from '../../migrations/0008_teaching'
 import * as companyTexts from '../../migrations/0009_company_texts'
+import * as nearMisses from '../../migrations/0010_near_misses'
 
 /** Every migration, by the file name that the Knex command line records; a unit test keeps this equal to the folder. */
 export const migrations: Record<string, Knex.Migration> = {
@@ -18,6 +19,7 @@ export const migrations: Record<string, Knex.Migration> = {
   '0006_struck_items.ts': struckItems,
   '0008_teaching.ts': teaching,
   '0009_company_texts.ts': companyTexts,
+  '0010_near_misses.ts': nearMisses,
 }
 
 /** Knex reads migrations from here, because a built server has no migrations folder. */

@@ -1,5 +1,6 @@
 import { type Clearance, clearanceOf, credentialsByType } from '#shared/domain/clearance'
 import { dateInZone } from '#shared/domain/dates'
+import type { ModuleMinutes } from '#shared/domain/missing'
 import { prepareRules } from '#shared/domain/rules'
 import type { ClearanceQuery, ClearanceView } from '#shared/schemas/clearance'
 import {
@@ -20,11 +21,13 @@ export interface ClearanceBook {
   duties: string[]
   /** May this person do this duty at this site (null: away from any) on the book's date? An unknown person is not cleared. */
   ask: (personId: string, duty: string, siteId: string | null) => Clearance
+  /** The same on a later date, as far as is known on the book's date. */
+  askOn: (personId: string, duty: string, siteId: string | null, onDate: string) => Clearance
 }
 
 /** Loads rules, types, credentials, holds, recency and learning of some people for a site's date. */
-export async function openClearanceBook(db: Db, options: { whom: Whom, date: string }): Promise<ClearanceBook> {
-  const { whom, date } = options
+export async function openClearanceBook(db: Db, options: { whom: Whom, date: string, moduleMinutes?: ReadonlyMap<string, ModuleMinutes> }): Promise<ClearanceBook> {
+  const { whom, date, moduleMinutes } = options
   const { timeZone } = await getCompany(db)
   const duties = await listClearanceDuties(db)
   const types = await mapClearanceTypes(db)
@@ -35,22 +38,20 @@ export async function openClearanceBook(db: Db, options: { whom: Whom, date: str
   const lastDays = await mapLastDutyDays(db, whom, date)
   const learning = await mapLearning(db, whom, timeZone)
   const dutyByCode = new Map(duties.map(duty => [duty.code, duty]))
-  return {
-    date,
-    duties: duties.map(duty => duty.code),
-    ask(personId, code, siteId) {
-      const person = people.get(personId)
-      const duty = dutyByCode.get(code)
-      if (!person || !duty) return { state: 'notCleared', until: null, missing: [{ anyOf: [], why: { kind: 'notEmployed' }, fix: { kind: 'office' } }], allowedFor: [] }
-      return clearanceOf({
-        person, duty, siteId, date, rules, types,
-        credentials: held.get(personId) ?? [],
-        holds: holds.get(personId),
-        learning: learning.get(personId),
-        lastDoneOn: lastDays.get(personId)?.get(code),
-      })
-    },
+  const askOn: ClearanceBook['askOn'] = (personId, code, siteId, onDate) => {
+    const person = people.get(personId)
+    const duty = dutyByCode.get(code)
+    if (!person || !duty) return { state: 'notCleared', until: null, missing: [{ anyOf: [], why: { kind: 'notEmployed' }, fix: { kind: 'office' } }], allowedFor: [] }
+    return clearanceOf({
+      person, duty, siteId, date: onDate, rules, types,
+      credentials: held.get(personId) ?? [],
+      holds: holds.get(personId),
+      learning: learning.get(personId),
+      lastDoneOn: lastDays.get(personId)?.get(code),
+      moduleMinutes,
+    })
   }
+  return { date, duties: duties.map(duty => duty.code), askOn, ask: (personId, code, siteId) => askOn(personId, code, siteId, date) }
 }
 
 /**

@@ -76,7 +76,7 @@ export async function queueReminders(db: Db, settings: Settings): Promise<number
   if (due.length === 0) return 0
   const { digests } = await toDigests(db, due.map(({ item }) => item), today, await listSafetyManagers(db, today))
   await db.transaction(async (trx) => {
-    await queueDigests(trx, digests, { keyOf: digest => `reminder:${today}:${digest.recipient.personId}`, origin: settings.origin, now })
+    await queueDigests(trx, digests, { keyOf: digest => `reminder:${today}:${digest.recipient.personId}`, origin: settings.linkOrigin, now })
     for (const { item, step } of due) await insertReminderMark(trx, { credentialId: item.id, step, expiresOn: item.expiresOn!, remindedOn: today })
   })
   return digests.length
@@ -86,7 +86,7 @@ export async function queueReminders(db: Db, settings: Settings): Promise<number
  * Queues reminders about chosen credentials to their holders and foremen, now. The same choice is sent once a day.
  * Answers how many messages, and which holders have no address. 404 for an unknown credential, 422 where one never expires.
  */
-export async function sendReminders(work: Work, credentialIds: string[], origin: string): Promise<{ queued: number, withoutEmail: { personId: string, name: string }[] }> {
+export async function sendReminders(work: Work, credentialIds: string[]): Promise<{ queued: number, withoutEmail: { personId: string, name: string }[] }> {
   const items: CredentialItem[] = []
   const ids = [...new Set(credentialIds)]
   for (let start = 0; start < ids.length; start += 500) items.push(...await listCredentialsByIds(work.db, ids.slice(start, start + 500), work.today))
@@ -95,7 +95,7 @@ export async function sendReminders(work: Work, credentialIds: string[], origin:
   const { digests, withoutEmail } = await toDigests(work.db, items, work.today, [])
   const keyOf = ({ recipient, items }: Digest) => `reminder-sent:${work.today}:${recipient.personId}:${sha256(items.map(item => item.id).sort().join()).slice(0, 24)}`
   await work.db.transaction(async (trx) => {
-    await queueDigests(trx, digests, { keyOf, origin, now: work.now })
+    await queueDigests(trx, digests, { keyOf, origin: work.settings.linkOrigin, now: work.now })
     await appendAudit(trx, { at: work.now, actorId: work.actor.personId, action: 'reminders.sent', subject: { kind: 'company', id: '1' }, after: { credentials: ids.length, messages: digests.length } })
   })
   return { queued: digests.length, withoutEmail: withoutEmail.map(({ personId, name }) => ({ personId, name })) }

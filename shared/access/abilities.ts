@@ -23,6 +23,7 @@ const leads = ['foreman', 'superintendent'] as const
 const holders = {
   'own.records': everybody,
   'nearMiss.report': everybody,
+  'nearMiss.answer': ['safety'],
   'people.read': ['foreman', 'superintendent', 'safety', 'admin'],
   'people.write': ['admin'],
   'people.invite': ['foreman', 'superintendent', 'admin'],
@@ -38,6 +39,7 @@ const holders = {
   'credentials.verify': ['safety'],
   'credentials.export': ['safety'],
   'reminders.send': ['safety'],
+  'modules.invite': [...leads, 'safety'],
   'clearance.read': ['foreman', 'superintendent', 'safety', 'admin'],
   'learning.own': everybody,
   'signOff.give': [...leads, 'safety'],

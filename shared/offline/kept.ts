@@ -9,7 +9,7 @@ export const cacheNames = { pages: 'pages', answers: 'answers', kept: 'kept', as
 /** Caches that hold something of a person. */
 export const personalCaches: readonly string[] = [cacheNames.pages, cacheNames.answers, cacheNames.kept]
 
-const keptPages = [/^\/$/, /^\/(learn|briefings|talks)(\/|$)/, /^\/(my-cards|crew|crew\/wall|more|questions|kept)$/]
+const keptPages = [/^\/$/, /^\/(learn|briefings|talks)(\/|$)/, /^\/(my-cards|crew|crew\/wall|more|questions|kept|near-misses)$/]
 const keptAnswers = [
   /^\/api\/(modules|talks)(\/|$)/, /^\/api\/(session|session\/sites|server-notes|my-day|company|credentials|training-minutes\/own)$/,
   /^\/api\/sites\/[^/]+\/today$/,

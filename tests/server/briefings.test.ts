@@ -137,14 +137,14 @@ describe('the morning at a site', () => {
     const path = '/api/talks/suggestions?site=site-a&date=2026-12-01&work=pour,brace'
     const [first, second] = [await foreman.get<{ items: { slug: string, score: number }[] }>(path), await foreman.get(path)]
     expect(first.text).toBe(second.text)
-    expect(first.body.items).toHaveLength(6)
+    expect(first.body.items.length).toBeGreaterThanOrEqual(48)
     expect(first.body.items.map(item => item.score)).toEqual([...first.body.items.map(item => item.score)].sort((a, b) => b - a))
     expect((await foreman.get('/api/talks/suggestions?site=site-a&work=paint')).status).toBe(400)
   })
 
   it('lists the talks in either language, and gives one to be read in both', async () => {
     const spanish = await foreman.get<{ items: { slug: string, check: { question: string } }[] }>('/api/talks?language=es')
-    expect(spanish.body.items).toHaveLength(6)
+    expect(spanish.body.items.length).toBeGreaterThanOrEqual(48)
     expect(spanish.body.items.find(item => item.slug === 'hose-whip')?.check.question).toContain('bomba')
     const one = await foreman.get<{ body: { en: unknown, es: unknown } }>('/api/talks/hose-whip')
     expect(one.body.body.en).not.toEqual(one.body.body.es)

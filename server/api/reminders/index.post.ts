@@ -6,4 +6,4 @@ export default defineRoute({
   ability: 'reminders.send',
   body: remindersBody,
   answer: remindersAnswer,
-}, ({ work, body, event }) => sendReminders(work, body.credentialIds, originOf(event)))
+}, ({ work, body }) => sendReminders(work, body.credentialIds))

@@ -10,3 +10,8 @@ export async function mapNames(db: Db): Promise<{ duties: Record<string, Bilingu
   const crews = new Map<string, string>((await db('crews').select('id', 'name')).map(row => [row.id, row.name]))
   return { duties, types, crews }
 }
+
+/** The name of each site by its id. */
+export async function mapSiteNames(db: Db): Promise<Map<string, string>> {
+  return new Map((await db('sites').select('id', 'name')).map(row => [row.id, row.name]))
+}

@@ -76,15 +76,15 @@ describe('sent by hand', () => {
   test('reaches the holder and the foreman once a day, and names who has no address', async () => {
     const sam = await workOf(db, 'sam')
     const ids = [await hold(db, { expiresOn: '2026-12-05' }), await hold(db, { personId: 'ines', expiresOn: '2026-12-05' })]
-    expect(await sendReminders(sam, ids, 'https://walls.test')).toEqual({ queued: 2, withoutEmail: [{ personId: 'ines', name: 'Inés Quispe' }] })
-    await sendReminders(sam, [...ids].reverse(), 'https://walls.test')
+    expect(await sendReminders(sam, ids)).toEqual({ queued: 2, withoutEmail: [{ personId: 'ines', name: 'Inés Quispe' }] })
+    await sendReminders(sam, [...ids].reverse())
     expect((await mail()).map(row => row.recipient)).toEqual(['fay@test.example', 'hal@test.example'])
   })
 
   test('refuses an unknown credential and one that never expires, and queues nothing', async () => {
     const sam = await workOf(db, 'sam')
-    await expect(sendReminders(sam, ['nothing'], '')).rejects.toMatchObject({ kind: 'notFound' })
-    await expect(sendReminders(sam, [await hold(db, { type: 'ladders' })], '')).rejects.toMatchObject({ kind: 'unprocessable' })
+    await expect(sendReminders(sam, ['nothing'])).rejects.toMatchObject({ kind: 'notFound' })
+    await expect(sendReminders(sam, [await hold(db, { type: 'ladders' })])).rejects.toMatchObject({ kind: 'unprocessable' })
     expect(await mail()).toEqual([])
   })
 })
