@@ -10,6 +10,7 @@ import { getCompany } from '../data/company'
 import type { Db } from '../data/database'
 import { isWithin } from '../data/reach'
 import { getSite } from '../data/sites'
+import { requirePerson } from './people'
 import { notFound } from './refusal'
 import { expectedAnywhere, expectedPeople } from './roster'
 import type { Work } from './work'
@@ -54,6 +55,13 @@ export async function openClearanceBook(db: Db, options: { whom: Whom, date: str
   return { date, duties: duties.map(duty => duty.code), askOn, ask: (personId, code, siteId) => askOn(personId, code, siteId, date) }
 }
 
+/** One person as if rostered at the site asked about, otherwise where they are that day, otherwise nowhere. 404 out of reach. */
+async function onePerson(work: Work, id: string, { siteId, date }: { siteId: string | undefined, date: string }) {
+  const person = await requirePerson(work, id)
+  const rostered = (await expectedAnywhere(work.db, date)).find(one => one.id === id)
+  return { id, name: person.name, crewId: person.crewId, siteId: siteId ?? rostered?.siteId ?? null, duties: rostered?.duties ?? [] }
+}
+
 /**
  * Who may do what on a date: the people rostered at a site (the actor must reach it, otherwise 404), or without a
  * site everybody rostered within reach, each at their own site. Without a duty, every duty is answered.
@@ -64,7 +72,11 @@ export async function readClearance(work: Work, query: ClearanceQuery): Promise<
   const site = query.site === undefined ? undefined : await getSite(db, query.site)
   if (query.site !== undefined && (!site || !isWithin(reach.siteIds, site.id))) throw notFound('site')
   const date = query.date ?? (site ? dateInZone(work.now, site.timeZone) : work.today)
-  const expected = site ? await expectedPeople(db, site.id, date) : (await expectedAnywhere(db, date)).filter(person => isWithin(reach.siteIds, person.siteId) || isWithin(reach.crewIds, person.crewId))
+  const expected = query.person !== undefined
+    ? [await onePerson(work, query.person, { siteId: site?.id, date })]
+    : site
+      ? await expectedPeople(db, site.id, date)
+      : (await expectedAnywhere(db, date)).filter(person => isWithin(reach.siteIds, person.siteId) || isWithin(reach.crewIds, person.crewId))
   const book = await openClearanceBook(db, { whom: expected.map(person => person.id), date })
   if (query.duty !== undefined && !book.duties.includes(query.duty)) throw notFound('duty')
   const duties = query.duty === undefined ? book.duties : [query.duty]

@@ -2,8 +2,11 @@ import { z } from 'zod'
 import { clearanceStates, missingReasons } from '../domain/states'
 import { code, date, id } from './common'
 
-/** Without a site: everybody rostered within the asker's reach. Without a date: today there. Without a duty: every duty. */
-export const clearanceQuery = z.strictObject({ site: id.optional(), date: date.optional(), duty: code.optional() })
+/**
+ * Without a site: everybody rostered within the asker's reach. Without a date: today there. Without a duty: every duty.
+ * With a person: that one alone, rostered or not.
+ */
+export const clearanceQuery = z.strictObject({ site: id.optional(), date: date.optional(), duty: code.optional(), person: id.optional() })
 export type ClearanceQuery = z.infer<typeof clearanceQuery>
 
 const fix = z.discriminatedUnion('kind', [
@@ -38,6 +41,10 @@ export const dutyClearanceView = z.object({
 
 export const clearanceView = z.object({
   date: z.string(),
-  people: z.array(z.object({ personId: z.string(), name: z.string(), crewId: z.string().nullable(), siteId: z.string(), duties: z.array(dutyClearanceView) })),
+  people: z.array(z.object({
+    personId: z.string(), name: z.string(), crewId: z.string().nullable(),
+    /** Where they are asked about; null away from any site. */
+    siteId: z.string().nullable(), duties: z.array(dutyClearanceView),
+  })),
 })
 export type ClearanceView = z.infer<typeof clearanceView>

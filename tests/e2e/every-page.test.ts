@@ -12,6 +12,8 @@ interface Ids { person: string, credential: string, briefing: string, signOff: s
 const visits: Visit[] = [
   { page: 'account.vue', as: 'foreman', path: () => '/account' },
   { page: 'audit.vue', as: 'safety', path: () => '/audit' },
+  { page: 'board.vue', as: 'safety', path: () => '/board' },
+  { page: 'board.vue', as: 'foreman', path: () => '/board?duty=hose-hand' },
   { page: 'briefings/[id].vue', as: 'foreman', path: ids => `/briefings/${ids.briefing}` },
   { page: 'briefings/index.vue', as: 'safety', path: () => '/briefings' },
   { page: 'check/[hash].vue', as: 'nobody', path: ids => `/check/${ids.hash}` },
