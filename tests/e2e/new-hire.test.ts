@@ -43,6 +43,20 @@ async function expectSound(page: Page) {
   await page.setViewportSize(phone)
 }
 
+/** In mid-quiz the other language asks the same questions, and every answer stays. */
+async function switchesLanguageInTheQuiz(page: Page, language: 'en' | 'es') {
+  const other = language === 'es' ? 'en' : 'es'
+  const stems = await page.locator('main ol > li').allInnerTexts()
+  await page.locator(`button[lang=${other}]`).click()
+  await page.getByRole('button', { name: words[other].submit }).waitFor()
+  const switched = await page.locator('main ol > li').allInnerTexts()
+  expect(switched.filter((stem, index) => stem === stems[index])).toEqual([])
+  expect(switched).toHaveLength(stems.length)
+  expect(await page.getByText(other === 'es' ? 'Sin contestar' : 'Not answered').count()).toBe(0)
+  await page.locator(`button[lang=${language}]`).click()
+  await page.getByRole('button', { name: words[language].submit }).waitFor()
+}
+
 describe.each([['stacking', 'es'], ['running-bond', 'en']] as const)('a new hire lays the block "%s" in %s', (slug, language) => {
   it('from the wall over lessons, quiz and hands-on to a card that a stranger can check', async () => {
     const say = words[language]
@@ -77,6 +91,7 @@ describe.each([['stacking', 'es'], ['running-bond', 'en']] as const)('a new hire
     await hydrated(page)
     await page.getByRole('button', { name: say.submit }).waitFor()
     await expectSound(page)
+    await switchesLanguageInTheQuiz(page, language)
     await page.getByRole('button', { name: say.submit }).click()
     await page.getByRole('heading', { level: 1, name: say.passed }).waitFor()
     await expectSound(page)
