@@ -52,7 +52,7 @@ async function switchesLanguageInTheQuiz(page: Page, language: 'en' | 'es') {
   const switched = await page.locator('main ol > li').allInnerTexts()
   expect(switched.filter((stem, index) => stem === stems[index])).toEqual([])
   expect(switched).toHaveLength(stems.length)
-  expect(await page.getByText(other === 'es' ? 'Sin contestar' : 'Not answered').count()).toBe(0)
+  expect(await page.getByText(other === 'es' ? 'Sin responder' : 'Not answered').count()).toBe(0)
   await page.locator(`button[lang=${language}]`).click()
   await page.getByRole('button', { name: words[language].submit }).waitFor()
 }
