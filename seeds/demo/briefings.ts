@@ -101,6 +101,7 @@ function briefingRow({ briefing }: Told) {
 async function sealOne(context: DemoContext, key: SigningKey, { briefing, lines, sealedBy, plan }: Told): Promise<{ hash: string, previousHash: string | null }> {
   const { id, siteId: site, closedAt, sealedAt } = briefing
   return appendSheet(context.knex, key, { siteId: site, briefingId: id, kind: 'sheet', sealedBy: sealedBy && personId(sealedBy), sealedAt }, number => buildSheet({
+    allowances: [],
     briefing, closedAt, company: 'Cedar Hollow Walls', speakerEmployer: employerOf(plan.foreman), number, signIns: lines,
     expected: plan.expected.map(one => ({ id: personId(one), name: nameOf(one) })),
     seal: { sealedAt, sealedBy: sealedBy && nameOf(sealedBy), isClockSet: false },

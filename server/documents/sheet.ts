@@ -128,6 +128,7 @@ export async function renderSheet({ sheet, addenda, language }: SheetDocument): 
       facts(sheet, say),
       signInTable(body.lines, say),
       { text: absent },
+      ...(body.allowances ?? []).map(({ person, type, allowedBy }): Content => ({ text: words.allowance(person, type, allowedBy), margin: [0, 3, 0, 0] })),
       await sealBlock(sheet, say),
       ...more,
       { text: words.sources, fontSize: 8, margin: [0, 12, 0, 0] },

@@ -6,6 +6,7 @@ import type { ClearanceQuery, ClearanceView } from '#shared/schemas/clearance'
 import {
   listClearanceDuties, listRules, mapClearancePeople, mapClearanceTypes, mapCredentials, mapHolds, mapLastDutyDays, mapLearning, type Whom,
 } from '../data/clearance-facts'
+import { mapAllowances } from '../data/allowances'
 import { getCompany } from '../data/company'
 import type { Db } from '../data/database'
 import { isWithin } from '../data/reach'
@@ -38,6 +39,7 @@ export async function openClearanceBook(db: Db, options: { whom: Whom, date: str
   const holds = await mapHolds(db, whom)
   const lastDays = await mapLastDutyDays(db, whom, date)
   const learning = await mapLearning(db, whom, timeZone)
+  const allowances = await mapAllowances(db, date)
   const dutyByCode = new Map(duties.map(duty => [duty.code, duty]))
   const askOn: ClearanceBook['askOn'] = (personId, code, siteId, onDate) => {
     const person = people.get(personId)
@@ -47,6 +49,7 @@ export async function openClearanceBook(db: Db, options: { whom: Whom, date: str
       person, duty, siteId, date: onDate, rules, types,
       credentials: held.get(personId) ?? [],
       holds: holds.get(personId),
+      allowances: allowances.get(personId),
       learning: learning.get(personId),
       lastDoneOn: lastDays.get(personId)?.get(code),
       moduleMinutes,

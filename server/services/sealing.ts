@@ -1,5 +1,6 @@
 import type { BriefingSheet } from '#shared/domain/sheet'
 import type { Language } from '#shared/domain/states'
+import { listAllowancesOf } from '../data/allowances'
 import { appendAudit } from '../data/audit'
 import { type BriefingWithSite, closeBriefing, getEmployer, listUnsealed, markSealed } from '../data/briefings'
 import { getCompany } from '../data/company'
@@ -50,9 +51,10 @@ async function seal(db: Db, id: string, sealer: Sealer): Promise<{ sheetHash: st
     const closedAt = briefing.closedAt ?? await lastMoment(trx, briefing)
     if (!briefing.closedAt) await closeBriefing(trx, id, closedAt)
     const [signIns, expected, company] = [await listSignIns(trx, id), await expectedPeople(trx, briefing.siteId, briefing.localDate), await getCompany(trx)]
+    const allowances = await listAllowancesOf(trx, { siteId: briefing.siteId, date: briefing.localDate })
     const speakerEmployer = await getEmployer(trx, briefing.runBy)
     const sheet = await appendSheet(trx, key, { siteId: briefing.siteId, briefingId: id, kind: 'sheet', sealedBy: sealer.actorId, sealedAt: sealer.now }, number => buildSheet({
-      briefing, closedAt, company: company.name, speakerEmployer, number, signIns, expected,
+      briefing, closedAt, company: company.name, speakerEmployer, number, signIns, expected, allowances,
       seal: { sealedAt: sealer.now, sealedBy: sealer.actorName, isClockSet: sealer.settings.clock.isSet },
     }))
     await markSealed(trx, id, sealer.now)

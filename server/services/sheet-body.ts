@@ -35,19 +35,21 @@ interface SheetGiven {
   signIns: readonly SignIn[]
   /** The roster of that day: who is on it and did not sign is absent. */
   expected: readonly { id: string, name: string }[]
+  /** One-shift allowances of that day, by the code of the card's type. */
+  allowances: readonly { person: string, type: string, allowedBy: string }[]
   number: number
   seal: { sealedAt: string, sealedBy: string | null, isClockSet: boolean }
 }
 
 /** The sheet of a closed briefing. Who gave the talk signs by sealing it; sealed by somebody else or by the day's end, it bears no mark of the speaker. */
-export function buildSheet({ briefing, closedAt, company, speakerEmployer, signIns, expected, number, seal }: SheetGiven): BriefingSheet {
+export function buildSheet({ briefing, closedAt, company, speakerEmployer, signIns, expected, allowances, number, seal }: SheetGiven): BriefingSheet {
   const { talkVersions: { en, es } } = briefing
   const signed = new Set(signIns.map(row => row.personId))
   return {
     kind: 'sheet', ...toSheetHead(briefing), number, company, siteAddress: briefing.site.address, openedAt: briefing.openedAt, closedAt,
     talk: { slug: briefing.talk, title: { en: en.title, es: es.title }, versions: { en: en.hash, es: es.hash }, sources: en.sources ?? [] },
     speaker: { name: briefing.runByName, title: briefing.runByRole as Role, company: speakerEmployer, markKind: 'typed', mark: seal.sealedBy === briefing.runByName ? briefing.runByName : null },
-    interpreter: null, work: briefing.work, weather: briefing.weather ? { ...briefing.weather } : null, notes: briefing.notes, questions: [], actions: [], checks: [],
+    interpreter: null, work: briefing.work, weather: briefing.weather ? { ...briefing.weather } : null, notes: briefing.notes, questions: [], actions: [], checks: [], ...(allowances.length > 0 && { allowances: [...allowances] }),
     lines: [...signIns].sort((first, second) => compareInstants(first.signedAt, second.signedAt)).map(toSheetLine),
     absent: expected.filter(person => !signed.has(person.id)).map(({ id, name }) => ({ name, personId: id, madeUpOn: null })),
     isWithoutSignal: briefing.withoutSignal, isSealedByDayEnd: seal.sealedBy === null, ...seal,

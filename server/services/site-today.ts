@@ -2,6 +2,7 @@ import { addDays, dateInZone } from '#shared/domain/dates'
 import { morningOf, usualWork } from '#shared/domain/morning'
 import type { WorkTag } from '#shared/domain/states'
 import type { TodayPerson, TodayView } from '#shared/schemas/today'
+import { isCompetentAt } from '../data/allowances'
 import { isWithin } from '../data/reach'
 import { getSite } from '../data/sites'
 import { listBriefings } from '../data/views/briefing-list'
@@ -49,5 +50,6 @@ export async function viewToday(work: Work, siteId: string, asked: Asked, talks:
     openBriefing: briefings.find(row => row.state === 'open') ?? null, briefings,
     lastTalks: recent.filter(row => row.date < date).slice(0, 5).map(row => ({ talk: row.talk, title: row.talkTitle, date: row.date })),
     suggestions: (await suggestForSite(work, { ...asked, site: site.id, date, work: planned }, talks)).slice(0, talksShown), mayRun,
+    mayAllow: date === dateInZone(work.now, site.timeZone) && await isCompetentAt(db, work.actor.personId, { siteId: site.id, date }),
   }
 }

@@ -40,6 +40,8 @@ const holders = {
   'credentials.export': ['safety'],
   'reminders.send': ['safety'],
   'modules.invite': [...leads, 'safety'],
+  /** Who is named as a competent person at the site; the service asks for the naming. */
+  'allowances.give': everybody,
   'clearance.read': ['foreman', 'superintendent', 'safety', 'admin'],
   'learning.own': everybody,
   'signOff.give': [...leads, 'safety'],

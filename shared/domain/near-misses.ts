@@ -11,3 +11,12 @@ const hazardsOf: Record<NearMissKind, readonly TalkHazard[]> = {
 
 /** The hazards that talks about such a near miss are tagged with. */
 export const hazardsOfNearMiss = (kind: NearMissKind) => hazardsOf[kind]
+
+/**
+ * The modules that each kind proposes to learn again until the company says otherwise (company rule, no source):
+ * proposed by the product, decided by the safety manager, never by itself.
+ */
+export const usualRetraining: Record<NearMissKind, readonly string[]> = {
+  formMoved: ['bracing-and-plumb'], blowout: ['blowout-response', 'pour-rate'], braceFailed: ['bracing-and-plumb'], fall: ['working-at-height'], struckBy: [], hoseWhip: ['pump-and-hose'],
+  powerLine: ['pump-and-hose'], vehicle: [], trench: ['footings-and-layout'], cement: ['concrete-for-walls'], heatOrCold: ['ready-for-site'], other: [],
+}

@@ -81,6 +81,8 @@ export interface BriefingSheet extends SheetHead {
   questions: string[]
   actions: CorrectiveAction[]
   checks: SheetCheck[]
+  /** Cards that nobody had verified yet, allowed for this one shift by a competent person; left out when there are none. */
+  allowances?: { person: string, type: string, allowedBy: string }[]
   lines: SheetLine[]
   /** Expected people who were not there, and when they made it up. */
   absent: { name: string, personId: string, madeUpOn: CalendarDate | null }[]

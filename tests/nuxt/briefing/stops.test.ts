@@ -3,7 +3,7 @@ import { expect, it } from 'vitest'
 import { TodayStop } from '#components'
 import type { TodayPerson } from '#shared/schemas/today'
 
-const names = { dutyNames: { 'hose-hand': { en: 'Hose hand', es: 'Manguerero' }, 'stacker': { en: 'Stacker', es: 'Colocador de bloques' } }, typeNames: { 'pump-and-hose': { en: 'Pump and hose', es: 'Bomba y manguera' } } }
+const names = { site: { id: 's', code: 's', name: 'S', timeZone: 'UTC' }, date: '2026-12-01', dutyNames: { 'hose-hand': { en: 'Hose hand', es: 'Manguerero' }, 'stacker': { en: 'Stacker', es: 'Colocador de bloques' } }, typeNames: { 'pump-and-hose': { en: 'Pump and hose', es: 'Bomba y manguera' } } }
 const stop = (duty: string, why: TodayPerson['stops'][number]['missing'][number]['why'], fix: { kind: string, [field: string]: unknown }) => ({ duty, state: 'notCleared' as const, until: null, missing: [{ anyOf: why.type ? [why.type] : [], why, fix }] })
 const person = (stops: TodayPerson['stops']): TodayPerson => ({ personId: 'p', name: 'D. Ferro', crew: null, state: 'notCleared', duties: stops, stops })
 
