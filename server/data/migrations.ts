@@ -9,6 +9,7 @@ import * as teaching from '../../migrations/0008_teaching'
 import * as companyTexts from '../../migrations/0009_company_texts'
 import * as nearMisses from '../../migrations/0010_near_misses'
 import * as allowancesAndRetraining from '../../migrations/0011_allowances_and_retraining'
+import * as packets from '../../migrations/0012_packets'
 
 /** Every migration, by the file name that the Knex command line records; a unit test keeps this equal to the folder. */
 export const migrations: Record<string, Knex.Migration> = {
@@ -22,6 +23,7 @@ export const migrations: Record<string, Knex.Migration> = {
   '0009_company_texts.ts': companyTexts,
   '0010_near_misses.ts': nearMisses,
   '0011_allowances_and_retraining.ts': allowancesAndRetraining,
+  '0012_packets.ts': packets,
 }
 
 /** Knex reads migrations from here, because a built server has no migrations folder. */

@@ -21,6 +21,8 @@ export const publicRoutes = [
   { method: 'GET', path: '/api/briefings/:id/admission', why: 'the talk for the browser that was admitted' },
   { method: 'POST', path: '/api/briefings/:id/sign-ins', why: 'the admission is the proof' },
   { method: 'GET', path: '/api/calendar/:token', why: 'calendar programs cannot sign in; the link can be revoked' },
+  { method: 'GET', path: '/api/packets/by-link/:token', why: 'a general contractor reads a packet without an account; the link ends and can be revoked' },
+  { method: 'GET', path: '/api/packets/by-link/:token/packet.pdf', why: 'the same packet on paper' },
 ] as const
 
 const patterns = publicRoutes.map(route => ({

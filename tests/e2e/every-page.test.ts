@@ -6,7 +6,7 @@ import { filesBelow } from '../support/project-files'
 
 type Who = DemoPerson | 'nobody'
 interface Visit { page: string, as: Who, path: (ids: Ids) => string, sizes?: ('narrow' | 'desk')[] }
-interface Ids { person: string, credential: string, briefing: string, signOff: string, site: string, hash: string, card: string, talk: string, join: string, reset: string }
+interface Ids { person: string, credential: string, briefing: string, signOff: string, site: string, hash: string, card: string, talk: string, join: string, reset: string, packet: string }
 
 /** Every page of the product, by its file, and who looks at it. */
 const visits: Visit[] = [
@@ -44,6 +44,8 @@ const visits: Visit[] = [
   { page: 'my-cards.vue', as: 'installer', path: () => '/my-cards' },
   { page: 'near-misses.vue', as: 'installer', path: () => '/near-misses' },
   { page: 'near-misses.vue', as: 'safety', path: () => '/near-misses' },
+  { page: 'packet/[token].vue', as: 'nobody', path: ids => ids.packet },
+  { page: 'packets.vue', as: 'safety', path: () => '/packets' },
   { page: 'people/[id].vue', as: 'safety', path: ids => `/people/${ids.person}` },
   { page: 'people/[id].vue', as: 'foreman', path: ids => `/people/${ids.person}` },
   { page: 'people/index.vue', as: 'office', path: () => '/people' },
@@ -83,7 +85,8 @@ async function findIds(): Promise<Ids> {
   const newcomer = (await office.post<{ id: string }>('/api/people', { name: 'Nadia Link', badge: `N${Date.now()}` })).body
   const join = (await office.post<{ url: string }>(`/api/people/${newcomer.id}/join-link`)).body
   const talk = (await safety.post<{ slug: string }>('/api/company-talks', { title: { en: 'Our gate', es: 'Nuestra entrada' }, minutes: 5, work: ['drive'], hazards: ['traffic'], seasons: [], text: { en: '## Ask first\n\nWho opens the gate?', es: '## Pregunte primero\n\n¿Quién abre?' }, sources: ['Company rule'], check: { question: { en: 'Who?', es: '¿Quién?' }, options: ['a', 'b', 'c'].map(id => ({ id, text: { en: `Person ${id}`, es: `Persona ${id}` } })), right: 'a', explain: { en: 'The one named.', es: 'La persona nombrada.' } } })).body.slug
-  return { person: person.id, talk, credential: own.id, briefing: sealed.id, signOff: requests[0]!.id, site: sites[0]!.code, hash: sheet.hash, card: card.cardCode ?? card.code ?? 'NONE', join: new URL(join.url).pathname, reset: '/reset/this-link-has-been-used-long-ago' }
+  const packet = new URL((await safety.post<{ url: string }>('/api/packets', { siteId: sites[0]!.id, endsOn: new Date(Date.now() + 864e5 * 9).toISOString().slice(0, 10), parts: ['duties', 'credentials', 'sheets'] })).body.url).pathname
+  return { person: person.id, packet, talk, credential: own.id, briefing: sealed.id, signOff: requests[0]!.id, site: sites[0]!.code, hash: sheet.hash, card: card.cardCode ?? card.code ?? 'NONE', join: new URL(join.url).pathname, reset: '/reset/this-link-has-been-used-long-ago' }
 }
 
 describe('every page', () => {
