@@ -51,6 +51,7 @@ export default defineNuxtConfig({
     origin: '',
     tls: '',
     smtpUrl: '',
+    textUrl: '',
     mailFrom: 'Pourwright <pourwright@localhost>',
     setupToken: '',
   },

@@ -1,6 +1,8 @@
 // A mail server for demos and tests: takes every message on this machine, keeps it as .eml in a folder and prints a
-// line. It passes nothing on. MAIL_PORT (2525) and MAIL_FOLDER (.data/mail) choose another port and folder.
+// line. It passes nothing on. MAIL_PORT (2525) and MAIL_FOLDER (.data/mail) choose another port and folder. With
+// TEXT_PORT it also plays the gateway for text messages: what is posted there is printed and kept as .json.
 import { mkdirSync, writeFileSync } from 'node:fs'
+import { createServer } from 'node:http'
 import { join, resolve } from 'node:path'
 import { SMTPServer } from 'smtp-server'
 
@@ -43,3 +45,22 @@ server.on('error', (error) => {
   if (error.code === 'EADDRINUSE') process.exit(1)
 })
 server.listen(port, '127.0.0.1', () => console.log(`[mail] Catching mail on 127.0.0.1:${port}; it is kept in ${folder}`))
+
+if (process.env.TEXT_PORT) {
+  createServer((request, answer) => {
+    const parts = []
+    request.on('data', part => parts.push(part))
+    request.on('end', () => {
+      const text = Buffer.concat(parts).toString('utf8')
+      try {
+        const message = JSON.parse(text)
+        writeFileSync(join(folder, `text-${String(message.id).replace(/[^\w-]/g, '')}.json`), text)
+        console.log(`[text] to ${message.to}: ${message.text}`)
+        answer.writeHead(204).end()
+      }
+      catch {
+        answer.writeHead(400).end()
+      }
+    })
+  }).listen(Number(process.env.TEXT_PORT), '127.0.0.1')
+}

@@ -10,6 +10,7 @@ buildWhenStale()
 const host = process.env.HOST || '127.0.0.1'
 const port = Number(process.env.PORT || 3000)
 const mailPort = Number(process.env.MAIL_PORT || 2525)
+const textPort = Number(process.env.TEXT_PORT || 2526)
 
 const isFree = (number, address) => new Promise((done) => {
   const probe = createServer()
@@ -37,7 +38,8 @@ process.on('SIGTERM', () => stop(0))
 
 const env = { HOST: host, PORT: String(port), NODE_ENV: 'production', NUXT_DEMO: process.env.NUXT_DEMO ?? 'true', NUXT_DATABASE_PATH: process.env.NUXT_DATABASE_PATH || resolve(root, '.data/pourwright.sqlite') }
 if (!process.env.NUXT_SMTP_URL) {
-  if (await isFree(mailPort, '127.0.0.1')) start([join(root, 'scripts/mail-catcher.mjs')], { MAIL_PORT: String(mailPort) })
+  if (await isFree(mailPort, '127.0.0.1')) start([join(root, 'scripts/mail-catcher.mjs')], { MAIL_PORT: String(mailPort), TEXT_PORT: String(textPort) })
+  env.NUXT_TEXT_URL = process.env.NUXT_TEXT_URL || `http://127.0.0.1:${textPort}/`
   env.NUXT_SMTP_URL = `smtp://127.0.0.1:${mailPort}`
 }
 say('Starting: migrates, and fills an empty database with the demo company')

@@ -69,8 +69,10 @@ export async function findCredentialByCode(db: Db, cardCode: string): Promise<{ 
   return db('credentials').join('people', 'people.id', 'credentials.personId').where({ cardCode }).first('credentials.id', 'people.name')
 }
 
+type Judged = 'verifiedBy' | 'verifiedAt' | 'verificationNote' | 'withdrawnOn' | 'withdrawnBy' | 'withdrawalReason'
+
 /** Adds a credential as it stands. The card's code must be new. */
-export async function insertCredential(db: Db, credential: Omit<StoredCredential, 'version' | 'verifiedBy' | 'verifiedAt' | 'verificationNote' | 'withdrawnOn' | 'withdrawnBy' | 'withdrawalReason'>): Promise<void> {
+export async function insertCredential(db: Db, credential: Omit<StoredCredential, 'version' | Judged> & Partial<Pick<StoredCredential, Judged>>): Promise<void> {
   await db('credentials').insert({ ...credential, details: credential.details && JSON.stringify(credential.details) })
 }
 

@@ -11,6 +11,10 @@ export interface MailRow {
   personId: string | null
   subject: string
   body: string
+  /** `text` goes to a phone number and has no subject. */
+  channel: 'mail' | 'text'
+  /** A calendar entry (RFC 5545) that goes with it. */
+  calendar: string | null
   state: MailState
   tries: number
   nextTryAt: string
@@ -26,17 +30,19 @@ export interface NewMail {
   personId?: string | null
   subject: string
   body: string
+  channel?: 'mail' | 'text'
+  calendar?: string
   now: string
 }
 
 /** Puts a message into the queue; does nothing when its key was queued before. */
 export async function insertMail(db: Db, { now, ...mail }: NewMail): Promise<void> {
-  await db('mail').insert({ id: randomUUID(), ...mail, personId: mail.personId ?? null, state: 'queued', tries: 0, nextTryAt: now, createdAt: now }).onConflict('key').ignore()
+  await db('mail').insert({ id: randomUUID(), ...mail, personId: mail.personId ?? null, channel: mail.channel ?? 'mail', calendar: mail.calendar ?? null, state: 'queued', tries: 0, nextTryAt: now, createdAt: now }).onConflict('key').ignore()
 }
 
 /** Queued messages whose time has come, the longest due first. */
-export async function listDueMail(db: Db, now: string, most: number): Promise<MailRow[]> {
-  return db('mail').where({ state: 'queued' }).where('nextTryAt', '<=', now).orderBy(['nextTryAt', 'createdAt', 'id']).limit(most)
+export async function listDueMail(db: Db, now: string, most: number, channels: readonly MailRow['channel'][]): Promise<MailRow[]> {
+  return db('mail').where({ state: 'queued' }).whereIn('channel', channels).where('nextTryAt', '<=', now).orderBy(['nextTryAt', 'createdAt', 'id']).limit(most)
 }
 
 /** One message, or undefined. */

@@ -10,6 +10,7 @@ import * as companyTexts from '../../migrations/0009_company_texts'
 import * as nearMisses from '../../migrations/0010_near_misses'
 import * as allowancesAndRetraining from '../../migrations/0011_allowances_and_retraining'
 import * as packets from '../../migrations/0012_packets'
+import * as renewalsAndTexts from '../../migrations/0013_renewals_and_texts'
 
 /** Every migration, by the file name that the Knex command line records; a unit test keeps this equal to the folder. */
 export const migrations: Record<string, Knex.Migration> = {
@@ -24,6 +25,7 @@ export const migrations: Record<string, Knex.Migration> = {
   '0010_near_misses.ts': nearMisses,
   '0011_allowances_and_retraining.ts': allowancesAndRetraining,
   '0012_packets.ts': packets,
+  '0013_renewals_and_texts.ts': renewalsAndTexts,
 }
 
 /** Knex reads migrations from here, because a built server has no migrations folder. */

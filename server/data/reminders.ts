@@ -6,7 +6,7 @@ export const reminderSteps = ['d60', 'd30', 'd7', 'after'] as const
 export type ReminderStep = (typeof reminderSteps)[number]
 
 /** Somebody to write to about a credential. */
-export interface Addressee { personId: string, name: string, email: string | null, language: Language }
+export interface Addressee { personId: string, name: string, email: string | null, phone: string | null, language: Language }
 
 /** The warnings that these credentials already had, as `id/step/expiry`. */
 export async function listReminderMarks(db: Db, credentialIds: string[]): Promise<Set<string>> {
@@ -28,7 +28,7 @@ export async function insertReminderMark(db: Db, mark: { credentialId: string, s
   await db('reminderMarks').insert(mark).onConflict(['credentialId', 'step', 'expiresOn']).ignore()
 }
 
-const columns = ['people.id as personId', 'people.name', 'people.email', 'people.language']
+const columns = ['people.id as personId', 'people.name', 'people.email', 'people.phone', 'people.language']
 const employed = (today: string) => (query: Knex.QueryBuilder) => query.where('people.hiredOn', '<=', today).where(left => left.whereNull('people.leftOn').orWhere('people.leftOn', '>=', today))
 
 /** Each holder with their foreman, who may be missing. */
@@ -36,11 +36,11 @@ export async function listHoldersWithForeman(db: Db, personIds: string[], today:
   const answer = new Map<string, { holder: Addressee, foreman: Addressee | null }>()
   for (let start = 0; start < personIds.length; start += 500) {
     const rows = await db('people').leftJoin('crews', 'crews.id', 'people.crewId').leftJoin('people as f', 'f.id', 'crews.foremanId')
-      .whereIn('people.id', personIds.slice(start, start + 500)).select(...columns, 'f.id as fId', 'f.name as fName', 'f.email as fEmail', 'f.language as fLanguage', 'f.leftOn as fLeftOn')
+      .whereIn('people.id', personIds.slice(start, start + 500)).select(...columns, 'f.id as fId', 'f.name as fName', 'f.email as fEmail', 'f.phone as fPhone', 'f.language as fLanguage', 'f.leftOn as fLeftOn')
     for (const row of rows) {
-      const { personId, name, email, language } = row
+      const { personId, name, email, phone, language } = row
       const hasForeman = row.fId !== null && row.fId !== personId && (row.fLeftOn === null || row.fLeftOn >= today)
-      answer.set(personId, { holder: { personId, name, email, language }, foreman: hasForeman ? { personId: row.fId, name: row.fName, email: row.fEmail, language: row.fLanguage } : null })
+      answer.set(personId, { holder: { personId, name, email, phone, language }, foreman: hasForeman ? { personId: row.fId, name: row.fName, email: row.fEmail, phone: row.fPhone, language: row.fLanguage } : null })
     }
   }
   return answer

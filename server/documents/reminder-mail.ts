@@ -42,6 +42,15 @@ function dateText(date: string, language: Language): string {
   return new Intl.DateTimeFormat(language === 'es' ? 'es-US' : 'en-US', { weekday: 'short', month: 'short', day: 'numeric', year: 'numeric', timeZone: 'UTC' }).format(new Date(`${date}T12:00:00Z`))
 }
 
+/** The same in one short text message: the first that ends, how many more, and where to act. */
+export function reminderText({ recipient: { language }, items, origin }: Pick<Reminder, 'recipient' | 'items' | 'origin'>): string {
+  const [first] = [...items].sort((a, b) => a.expiresOn! < b.expiresOn! ? -1 : 1)
+  const more = items.length - 1
+  const line = words[language].line({ credential: first!.typeName[language], date: dateText(first!.expiresOn!, language), days: first!.daysLeft! })
+  const rest = more === 0 ? '' : language === 'es' ? ` Y ${more} más.` : ` And ${more} more.`
+  return `Pourwright: ${line}.${rest} ${origin}/my-cards`
+}
+
 export interface Reminder { recipient: { personId: string, name: string, language: Language }, items: CredentialItem[], origin: string }
 
 /** One plain-text digest: what expired first, then what expires next, own ones without a name in front. */

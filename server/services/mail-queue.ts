@@ -5,14 +5,14 @@ import { withoutSecrets } from './mail'
 import { notFound, Refusal } from './refusal'
 import type { Work } from './work'
 
-function toView({ id, recipient, personId, subject, body, state, tries, nextTryAt, lastError, createdAt, sentAt }: MailRow): MailView {
-  return { id, recipient, personId, subject, body: withoutSecrets(body), state, tries, nextTryAt: state === 'queued' ? nextTryAt : null, lastError, createdAt, sentAt }
+function toView({ id, recipient, personId, subject, body, channel, state, tries, nextTryAt, lastError, createdAt, sentAt }: MailRow): MailView {
+  return { id, recipient, personId, subject, body: withoutSecrets(body), channel, state, tries, nextTryAt: state === 'queued' ? nextTryAt : null, lastError, createdAt, sentAt }
 }
 
 /** A page of the mail queue, the newest first. */
 export async function readMailQueue(work: Work, { state, page, perPage }: MailQuery) {
   const { rows, total } = await listMail(work.db, { state, page, perPage })
-  return { items: rows.map(toView), total, page, perPage, canSend: work.settings.smtpUrl !== '' }
+  return { items: rows.map(toView), total, page, perPage, canSend: work.settings.smtpUrl !== '', canText: work.settings.textUrl !== '' }
 }
 
 /** Puts a failed or waiting message in front again, with all its tries. Throws 409 for one that was sent. */

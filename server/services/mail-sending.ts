@@ -4,8 +4,8 @@ import { listDueMail, updateMail, type MailRow } from '../data/mail'
 import { withoutSecrets } from './mail'
 import type { Settings } from './settings'
 
-/** Sends one message; throws when the mail server did not take it. */
-export type Deliver = (mail: Pick<MailRow, 'id' | 'recipient' | 'subject' | 'body'>) => Promise<void>
+/** Sends one message; throws when the server behind it did not take it. */
+export type Deliver = (mail: Pick<MailRow, 'id' | 'recipient' | 'subject' | 'body' | 'channel' | 'calendar'>) => Promise<void>
 
 const mostTries = 10
 const firstWaitMinutes = 1
@@ -21,10 +21,30 @@ export function smtpDelivery(smtpUrl: string, from: string): { deliver: Deliver,
   const limit = secondsToAnswer * 1000
   const transport = createTransport({ url: smtpUrl, connectionTimeout: limit, greetingTimeout: limit, socketTimeout: limit, disableFileAccess: true, disableUrlAccess: true })
   return {
-    deliver: async ({ id, recipient, subject, body }) => {
-      await transport.sendMail({ from, to: { name: '', address: recipient }, subject, text: body, messageId: `<${id}@pourwright>`, headers: { 'Auto-Submitted': 'auto-generated' } })
+    deliver: async ({ id, recipient, subject, body, calendar }) => {
+      const icalEvent = calendar === null ? undefined : { method: /^METHOD:(\w+)/m.exec(calendar)?.[1] ?? 'PUBLISH', filename: 'session.ics', content: calendar }
+      await transport.sendMail({ from, to: { name: '', address: recipient }, subject, text: body, icalEvent, messageId: `<${id}@pourwright>`, headers: { 'Auto-Submitted': 'auto-generated' } })
     },
     close: () => transport.close(),
+  }
+}
+
+/**
+ * A way to deliver text messages: a POST of `{ id, to, text }` as JSON to the gateway of the company's choice, with
+ * user and password of the address as basic authentication. The same `id` may come twice and means the same message.
+ */
+export function textDelivery(textUrl: string): Deliver {
+  const { username, password, href } = new URL(textUrl)
+  const url = new URL(href)
+  url.username = ''
+  url.password = ''
+  return async ({ id, recipient, body }) => {
+    const answer = await fetch(url, {
+      method: 'POST', redirect: 'error', signal: AbortSignal.timeout(secondsToAnswer * 1000),
+      headers: { 'content-type': 'application/json', ...(username && { authorization: `Basic ${Buffer.from(`${decodeURIComponent(username)}:${decodeURIComponent(password)}`).toString('base64')}` }) },
+      body: JSON.stringify({ id, to: recipient, text: body }),
+    })
+    if (!answer.ok) throw new Error(`The text gateway answered ${answer.status}`)
   }
 }
 
@@ -50,13 +70,13 @@ const running = new WeakMap<Db, Promise<number>>()
  * it. What fails waits longer each time and is given up after ten tries. Two runs never overlap: a second call waits
  * for the first and answers the same.
  */
-export async function sendDueMail(db: Db, deliver: Deliver, now: () => string): Promise<number> {
+export async function sendDueMail(db: Db, deliver: Deliver, now: () => string, channels: readonly MailRow['channel'][] = ['mail', 'text']): Promise<number> {
   const underWay = running.get(db)
   if (underWay) return underWay
   const run = (async () => {
     let sent = 0
     for (;;) {
-      const due = await listDueMail(db, now(), batch)
+      const due = await listDueMail(db, now(), batch, channels)
       for (const mail of due) sent += await sendOne(db, mail, deliver, now()) ? 1 : 0
       if (due.length < batch) return sent
     }
@@ -65,14 +85,16 @@ export async function sendDueMail(db: Db, deliver: Deliver, now: () => string): 
   return run
 }
 
-/** Sends what is due through the configured mail server; without one everything stays queued, visible to the admin. */
-export async function sendThroughSmtp(db: Db, settings: Settings): Promise<number> {
-  if (!settings.smtpUrl) return 0
-  const { deliver, close } = smtpDelivery(settings.smtpUrl, settings.mailFrom)
+/** Sends what is due through the configured mail server and text gateway; what has none stays queued, visible to the admin. */
+export async function sendQueued(db: Db, settings: Settings): Promise<number> {
+  const mail = settings.smtpUrl ? smtpDelivery(settings.smtpUrl, settings.mailFrom) : null
+  const text = settings.textUrl ? textDelivery(settings.textUrl) : null
+  const channels = [...(mail ? ['mail' as const] : []), ...(text ? ['text' as const] : [])]
+  if (channels.length === 0) return 0
   try {
-    return await sendDueMail(db, deliver, settings.clock.now)
+    return await sendDueMail(db, message => (message.channel === 'text' ? text!(message) : mail!.deliver(message)), settings.clock.now, channels)
   }
   finally {
-    close()
+    mail?.close()
   }
 }

@@ -5,9 +5,9 @@ import { getCompany } from '../data/company'
 import type { Db } from '../data/database'
 import { insertReminderMark, listHoldersWithForeman, listReminderMarks, listSafetyManagers, wasRemindedOn, type Addressee, type ReminderStep } from '../data/reminders'
 import { listCredentialIds, listCredentialsByIds } from '../data/views/credential-list'
-import { reminderMail } from '../documents/reminder-mail'
+import { reminderMail, reminderText } from '../documents/reminder-mail'
 import { sha256 } from './hashing'
-import { queueMail } from './mail'
+import { queueMail, toNumber } from './mail'
 import { badField, notFound } from './refusal'
 import type { Settings } from './settings'
 import type { Work } from './work'
@@ -62,6 +62,16 @@ async function listDue(db: Db, today: string): Promise<{ item: CredentialItem, s
   return due
 }
 
+/** The holders' own lines as text messages, where the company sends them and a phone number is known. */
+async function queueTexts(db: Db, items: CredentialItem[], { today, origin, now }: { today: string, origin: string, now: string }): Promise<void> {
+  const holders = await listHoldersWithForeman(db, [...new Set(items.map(item => item.personId))], today)
+  for (const { holder } of holders.values()) {
+    if (!holder.phone || toNumber(holder.phone) === null) continue
+    const body = reminderText({ recipient: holder, items: items.filter(item => item.personId === holder.personId), origin })
+    await queueMail(db, { key: `reminder-text:${today}:${holder.personId}`, channel: 'text', recipient: holder.phone, personId: holder.personId, subject: '', body, now })
+  }
+}
+
 /**
  * Queues the day's reminders: at 60, 30 and 7 days and from the day after expiry, one digest a person and day, to the
  * holder, their foreman and the safety managers. Run it as often as you like: a day's digests go out once, what was
@@ -77,6 +87,7 @@ export async function queueReminders(db: Db, settings: Settings): Promise<number
   const { digests } = await toDigests(db, due.map(({ item }) => item), today, await listSafetyManagers(db, today))
   await db.transaction(async (trx) => {
     await queueDigests(trx, digests, { keyOf: digest => `reminder:${today}:${digest.recipient.personId}`, origin: settings.linkOrigin, now })
+    if (company.textReminders) await queueTexts(trx, due.map(({ item }) => item), { today, origin: settings.linkOrigin, now })
     for (const { item, step } of due) await insertReminderMark(trx, { credentialId: item.id, step, expiresOn: item.expiresOn!, remindedOn: today })
   })
   return digests.length
@@ -99,4 +110,12 @@ export async function sendReminders(work: Work, credentialIds: string[]): Promis
     await appendAudit(trx, { at: work.now, actorId: work.actor.personId, action: 'reminders.sent', subject: { kind: 'company', id: '1' }, after: { credentials: ids.length, messages: digests.length } })
   })
   return { queued: digests.length, withoutEmail: withoutEmail.map(({ personId, name }) => ({ personId, name })) }
+}
+
+/** What the next run would send, without sending it: to whom, and the words. */
+export async function previewReminders(work: Work): Promise<{ items: { recipient: string, name: string, subject: string, body: string }[] }> {
+  const { db, today, settings } = work
+  const due = await listDue(db, today)
+  const { digests } = await toDigests(db, due.map(({ item }) => item), today, await listSafetyManagers(db, today))
+  return { items: digests.map(({ recipient, items }) => ({ recipient: recipient.email, name: recipient.name, ...reminderMail({ recipient, items, origin: settings.linkOrigin }) })) }
 }

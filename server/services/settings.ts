@@ -15,11 +15,14 @@ export interface Settings {
   linkOrigin: string
   hasTls: boolean
   smtpUrl: string
+  /** Where text messages are posted; empty: none go out. */
+  textUrl: string
   mailFrom: string
   setupToken: string
 }
 
-type Raw = Record<'databasePath' | 'filesPath' | 'signingKeyPath' | 'signingKey' | 'clock' | 'demo' | 'origin' | 'tls' | 'smtpUrl' | 'mailFrom' | 'setupToken', unknown>
+/** Text gateways came later than the rest: what calls without one means none. */
+type Raw = { textUrl?: unknown } & Record<'databasePath' | 'filesPath' | 'signingKeyPath' | 'signingKey' | 'clock' | 'demo' | 'origin' | 'tls' | 'smtpUrl' | 'mailFrom' | 'setupToken', unknown>
 
 /** `http://host:port` as the server was told to listen; localhost when it listens everywhere. */
 function listeningOrigin(): string {
@@ -46,6 +49,7 @@ export function toSettings(raw: Raw): Settings {
     linkOrigin: text('origin').replace(/\/+$/, '') || listeningOrigin(),
     hasTls: isOn(raw.tls),
     smtpUrl: text('smtpUrl'),
+    textUrl: text('textUrl'),
     mailFrom: text('mailFrom'),
     setupToken: text('setupToken'),
   }

@@ -39,6 +39,7 @@ const holders = {
   'credentials.verify': ['safety'],
   'credentials.export': ['safety'],
   'reminders.send': ['safety'],
+  'renewals.manage': ['safety'],
   'modules.invite': [...leads, 'safety'],
   /** Who is named as a competent person at the site; the service asks for the naming. */
   'allowances.give': everybody,

@@ -77,6 +77,11 @@ export function startOfDay(date: CalendarDate, timeZone: string): Instant {
   return toPlainDate(date).toZonedDateTime(requireZone(timeZone)).toInstant().toString()
 }
 
+/** The instant of a wall-clock time (`HH:MM`) on a date in a zone; a time that the clocks skip moves forward. Throws on what is no time. */
+export function instantAt(date: CalendarDate, time: string, timeZone: string): Instant {
+  return Temporal.PlainDate.from(date).toZonedDateTime({ timeZone, plainTime: Temporal.PlainTime.from(time) }).toInstant().toString()
+}
+
 /**
  * The end of a day in a zone, half open: the first instant that no longer belongs to it. A day may be 23 or
  * 25 hours long.

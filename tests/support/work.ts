@@ -13,7 +13,7 @@ import type { Work } from '../../server/services/work'
 /** A migrated SQLite file of its own. */
 export const openTestDatabase = (): Promise<Db> => openDatabase(join(mkdtempSync(join(tmpdir(), 'pourwright-db-')), 'test.sqlite'))
 
-export const testSettings = (raw: Record<string, unknown> = {}): Settings => toSettings({ databasePath: '', filesPath: '', signingKeyPath: '', signingKey: '', clock: '', demo: '', origin: 'https://pourwright.test', tls: '', smtpUrl: '', mailFrom: 'Pourwright <pourwright@localhost>', setupToken: '', ...raw })
+export const testSettings = (raw: Record<string, unknown> = {}): Settings => toSettings({ databasePath: '', filesPath: '', signingKeyPath: '', signingKey: '', clock: '', demo: '', origin: 'https://pourwright.test', tls: '', smtpUrl: '', textUrl: '', mailFrom: 'Pourwright <pourwright@localhost>', setupToken: '', ...raw })
 
 /** What a service is given, without a server: `now` is a Tuesday morning in Denver unless said. */
 export async function workFor<Who extends Actor | null>(db: Db, actor: Who, options: { now?: string, settings?: Settings } = {}): Promise<Work<Who>> {
