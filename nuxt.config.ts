@@ -6,7 +6,7 @@ const languages = [
   { code: 'es', language: 'es-US', name: 'Español' },
 ] as const
 /** One message file per part of the product, the same names in each language. */
-const messageFiles = ['common', 'sign-in', 'people', 'learn', 'training', 'kept', 'talks', 'plan', 'board', 'packets', 'near-misses', 'item-review', 'briefing', 'credentials', 'records', 'errors']
+const messageFiles = ['common', 'sign-in', 'people', 'learn', 'training', 'kept', 'talks', 'plan', 'board', 'packets', 'renewals', 'near-misses', 'item-review', 'briefing', 'credentials', 'records', 'errors']
 
 /** The worker of exactly the pdf.js that vue-pdf-embed brings; another version refuses to talk to it. */
 const pdfWorker = dirname(createRequire(resolve('node_modules/vue-pdf-embed/dist/index.mjs')).resolve('pdfjs-dist/legacy/build/pdf.worker.min.mjs'))

@@ -8,8 +8,6 @@ export function useNewCard(personId: string, types: () => readonly TypeChoice[])
   const { toProblem } = useApiError()
   const { t } = useI18n()
   const form = reactive({ type: '', issuedOn: '', expiresOn: '', siteId: '', issuer: '', number: '', trainer: '', evaluator: '', evaluatedOn: '', equipment: '' })
-  const fileId = ref('')
-  const isSending = ref(false)
   const isSaving = ref(false)
   const problem = ref('')
   const fields = ref<Record<string, string>>({})
@@ -20,21 +18,11 @@ export function useNewCard(personId: string, types: () => readonly TypeChoice[])
     problem.value = found.text
     fields.value = Object.fromEntries(Object.keys(found.fields).map(field => [field, found.text]))
   }
-  /** Sends the chosen file at once, so that saving the card is quick. */
-  async function send(file: File) {
-    fileId.value = ''
+  const { fileId, isSending, send: upload } = useUpload(tell)
+  function send(file: File) {
     problem.value = ''
     fields.value = {}
-    isSending.value = true
-    const body = new FormData()
-    body.append('file', file)
-    try {
-      fileId.value = (await $fetch<{ id: string }>('/api/files', { method: 'POST', body })).id
-    }
-    catch (error) {
-      tell(error)
-    }
-    isSending.value = false
+    return upload(file)
   }
   function findGaps(): Record<string, string> {
     const needed = ['type', 'issuedOn', ...(chosen.value?.validity.kind === 'printed' ? ['expiresOn'] : []), ...(chosen.value?.perSite ? ['siteId'] : [])]

@@ -5,7 +5,7 @@ import { packetWords } from './packet-words'
 import { renderPdf, ruledTable } from './pdf'
 
 const heads = (columns: readonly string[]): TableCell[] => columns.map(text => ({ text, bold: true }))
-const table = (widths: (string | number)[], body: TableCell[][]): Content => ({ layout: ruledTable, margin: [0, 4, 0, 12], fontSize: 8.5, table: { headerRows: 1, dontBreakRows: true, widths, body } })
+const table = (widths: (string | number)[], body: TableCell[][]): Content => ({ layout: ruledTable, margin: [0, 4, 0, 12], fontSize: 8.5, table: { headerRows: 1, keepWithHeaderRows: 1, dontBreakRows: true, widths, body } })
 const heading = (text: string): Content => ({ text, bold: true, fontSize: 12, margin: [0, 8, 0, 2] })
 
 /** A packet on paper: people with their duties, credentials in date, the last sheets with where to check them; the disclaimer at every foot. */

@@ -6,7 +6,7 @@ import { filesBelow } from '../support/project-files'
 
 type Who = DemoPerson | 'nobody'
 interface Visit { page: string, as: Who, path: (ids: Ids) => string, sizes?: ('narrow' | 'desk')[] }
-interface Ids { person: string, credential: string, briefing: string, signOff: string, site: string, hash: string, card: string, talk: string, join: string, reset: string, packet: string }
+interface Ids { person: string, credential: string, briefing: string, signOff: string, site: string, hash: string, card: string, talk: string, join: string, reset: string, packet: string, renewal: string }
 
 /** Every page of the product, by its file, and who looks at it. */
 const visits: Visit[] = [
@@ -46,6 +46,8 @@ const visits: Visit[] = [
   { page: 'near-misses.vue', as: 'safety', path: () => '/near-misses' },
   { page: 'packet/[token].vue', as: 'nobody', path: ids => ids.packet },
   { page: 'packets.vue', as: 'safety', path: () => '/packets' },
+  { page: 'renewals/index.vue', as: 'safety', path: () => '/renewals' },
+  { page: 'renewals/[id].vue', as: 'safety', path: ids => `/renewals/${ids.renewal}` },
   { page: 'people/[id].vue', as: 'safety', path: ids => `/people/${ids.person}` },
   { page: 'people/[id].vue', as: 'foreman', path: ids => `/people/${ids.person}` },
   { page: 'people/index.vue', as: 'office', path: () => '/people' },
@@ -86,7 +88,8 @@ async function findIds(): Promise<Ids> {
   const join = (await office.post<{ url: string }>(`/api/people/${newcomer.id}/join-link`)).body
   const talk = (await safety.post<{ slug: string }>('/api/company-talks', { title: { en: 'Our gate', es: 'Nuestra entrada' }, minutes: 5, work: ['drive'], hazards: ['traffic'], seasons: [], text: { en: '## Ask first\n\nWho opens the gate?', es: '## Pregunte primero\n\n¿Quién abre?' }, sources: ['Company rule'], check: { question: { en: 'Who?', es: '¿Quién?' }, options: ['a', 'b', 'c'].map(id => ({ id, text: { en: `Person ${id}`, es: `Persona ${id}` } })), right: 'a', explain: { en: 'The one named.', es: 'La persona nombrada.' } } })).body.slug
   const packet = new URL((await safety.post<{ url: string }>('/api/packets', { siteId: sites[0]!.id, endsOn: new Date(Date.now() + 864e5 * 9).toISOString().slice(0, 10), parts: ['duties', 'credentials', 'sheets'] })).body.url).pathname
-  return { person: person.id, packet, talk, credential: own.id, briefing: sealed.id, signOff: requests[0]!.id, site: sites[0]!.code, hash: sheet.hash, card: card.cardCode ?? card.code ?? 'NONE', join: new URL(join.url).pathname, reset: '/reset/this-link-has-been-used-long-ago' }
+  const renewal = (await safety.post<{ id: string }>('/api/renewals', { type: 'heat-illness', siteId: sites[0]!.id, place: 'Yard trailer', trainer: 'Iris Lang', date: new Date(Date.now() + 864e5 * 5).toISOString().slice(0, 10), time: '06:00', minutes: 60, seats: 3, personIds: [person.id] })).body.id
+  return { person: person.id, packet, renewal, talk, credential: own.id, briefing: sealed.id, signOff: requests[0]!.id, site: sites[0]!.code, hash: sheet.hash, card: card.cardCode ?? card.code ?? 'NONE', join: new URL(join.url).pathname, reset: '/reset/this-link-has-been-used-long-ago' }
 }
 
 describe('every page', () => {
