@@ -48,9 +48,9 @@ async function scriptBytes(origin: string, path: string): Promise<number> {
 
 const line = (name: string, measured: Measured) => console.log(`${name.padEnd(44)} ${measured.perSecond.toFixed(0).padStart(7)} /s   p50 ${measured.p50.toFixed(1)} ms   p99 ${measured.p99.toFixed(1)} ms   ${JSON.stringify(measured.statuses)}`)
 
-async function benchSignIns(origin: string, bareOrigin: string, count: number) {
+async function benchSignIns(origin: string, bareOrigin: string, count: number): Promise<string> {
   const foreman = await signedIn('foreman', origin)
-  const sites = (await foreman.get<{ sites: { id: string }[] }>('/api/session/sites')).body.sites
+  const sites = (await foreman.get<{ sites: { id: string, code: string }[] }>('/api/session/sites')).body.sites
   const talk = (await foreman.get<{ items: { slug: string }[] }>('/api/talks')).body.items[0]!.slug
   const briefing = (await foreman.post<{ id: string }>('/api/briefings', { siteId: sites[0]!.id, talk, work: ['stack'] })).body
   const headers = { origin, 'content-type': 'application/json' }
@@ -70,16 +70,17 @@ async function benchSignIns(origin: string, bareOrigin: string, count: number) {
   line('bare route, one durable INSERT', bare)
   line('POST …/sign-ins, own phones with admissions', product)
   console.log(`sign-ins run at ${(product.perSecond / bare.perSecond).toFixed(3)} of the bare route; p50 ${(product.p50 / bare.p50).toFixed(1)} times, p99 ${(product.p99 / bare.p99).toFixed(1)} times\n`)
+  return `/s/${sites[0]!.code}`
 }
 
 /** What a phone loads and how long until it can be read, against an empty page of the same framework. */
-async function benchPages(origin: string, bareOrigin: string) {
+async function benchPages(origin: string, bareOrigin: string, signInPage: string) {
   const browser = await openBenchBrowser()
   const empty = await weighPage(browser, bareOrigin, '/')
   console.log(`\nSlow phone: processor ${slowPhone.slowerBy} times slower, ${slowPhone.bytesPerSecond * 8 / 1000} kbit/s, ${slowPhone.roundTripMs} ms round trip, empty cache`)
   console.log(`an empty page${' '.repeat(31)} ${(empty.transferred / 1024).toFixed(0).padStart(5)} KB  ${(empty.readableMs / 1000).toFixed(1)} s`)
   const installer = { email: 'installer@cedarhollow.example', password: 'running-bond' }
-  for (const [path, who] of [['/learn/stacking/level-and-plumb', installer], ['/learn/pour-rate/the-strictest-limit', installer], ['/sign-in', undefined], ['/s/nowhere', undefined]] as const) {
+  for (const [path, who] of [['/learn/stacking/level-and-plumb', installer], ['/learn/pour-rate/the-strictest-limit', installer], ['/sign-in', undefined], [signInPage, undefined]] as const) {
     const own = await weighPage(browser, origin, path, who)
     console.log(`${path.padEnd(44)} ${(own.transferred / 1024).toFixed(0).padStart(5)} KB  ${(own.readableMs / 1000).toFixed(1)} s   ${(own.transferred / empty.transferred).toFixed(2)} times the bytes, ${(own.readableMs / empty.readableMs).toFixed(2)} times the time`)
   }
@@ -90,10 +91,10 @@ buildWhenStale()
 const bare = await startBare()
 const product = await startServer({ env: { NUXT_DEMO: 'true' } })
 try {
-  await benchSignIns(product.origin, bare.origin, Number(process.env.BENCH_COUNT ?? 1000))
-  await benchPages(product.origin, bare.origin)
+  const signInPage = await benchSignIns(product.origin, bare.origin, Number(process.env.BENCH_COUNT ?? 1000))
+  await benchPages(product.origin, bare.origin, signInPage)
   const empty = await scriptBytes(bare.origin, '/')
-  for (const path of ['/sign-in', '/s/nowhere']) {
+  for (const path of ['/sign-in', signInPage]) {
     const own = await scriptBytes(product.origin, path)
     console.log(`JavaScript of ${path}: ${(own / 1024).toFixed(1)} KB, an empty page ${(empty / 1024).toFixed(1)} KB: ${(own / empty).toFixed(2)} times`)
   }
