@@ -134,15 +134,18 @@ function placements(board: Board, matching: Matching): { duty: string, personId:
   return matching.flatMap((person, slot) => person === null ? [] : [{ duty: dutyOf(board, slot), personId: personOf(board, person) }])
 }
 
-/** People without a place who may learn beside somebody placed, one to one, as many as can. */
+/** People without a place who may learn beside somebody placed, one to one, as many as can; somebody placed by hand only on that duty. */
 function learners(
-  { pairs, personIds }: CrewingQuestion, placed: readonly { duty: string, personId: string }[],
+  { pairs, personIds, locked = [] }: CrewingQuestion, placed: readonly { duty: string, personId: string }[],
 ): { duty: string, personId: string, beside: string }[] {
   const busy = new Set(placed.map(place => place.personId))
   const free = [...new Set(personIds)].filter(id => !busy.has(id)).sort()
   const learning = new Set(pairs.filter(pair => pair.state === 'learning').map(pair => keyOf(pair.personId, pair.duty)))
-  const matching = largestMatching(free.map(id =>
-    [...placed.keys()].filter(index => learning.has(keyOf(id, placed[index]?.duty ?? '')))))
+  const kept = new Map(locked.map(place => [place.personId, place.duty]))
+  const matching = largestMatching(free.map(id => [...placed.keys()].filter((index) => {
+    const duty = placed[index]?.duty ?? ''
+    return learning.has(keyOf(id, duty)) && (kept.get(id) ?? duty) === duty
+  })))
   return matching.flatMap((index, row) => {
     const place = index === null ? undefined : placed[index]
     const personId = free[row]

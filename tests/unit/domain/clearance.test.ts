@@ -298,6 +298,23 @@ describe('for any person', () => {
     }), { numRuns: 400 })
   })
 
+  it('the clearance on a day is what the history as known that day says: what came later changes nothing', () => {
+    fc.assert(fc.property(question, (asked) => {
+      const isKnown = (date?: string | null) => typeof date === 'string' && date <= asked.date
+      const asKnown = {
+        ...asked, lastDoneOn: isKnown(asked.lastDoneOn) ? asked.lastDoneOn : null,
+        credentials: asked.credentials.filter(one => isKnown(one.issuedOn)).map(one => ({ ...one, withdrawnOn: isKnown(one.withdrawnOn) ? one.withdrawnOn : null })),
+        person: { ...asked.person, leftOn: isKnown(asked.person.leftOn) ? asked.person.leftOn : null },
+        holds: asked.holds.filter(hold => isKnown(hold.from)),
+      }
+      // The caller gives the last day of doing the duty on or before the date asked about.
+      const full = ask({ ...asked, lastDoneOn: asKnown.lastDoneOn })
+      const then = ask(asKnown)
+      expect(full.state).toBe(then.state)
+      if (full.state === 'cleared') expect(then.until === null || (full.until !== null && full.until <= then.until)).toBe(true)
+    }), { numRuns: 600 })
+  })
+
   it('nothing is missing exactly when cleared', () => {
     fc.assert(fc.property(question, (asked) => {
       const answer = ask(asked)
