@@ -31,9 +31,9 @@ export async function listPlaceNames(db: Db): Promise<{ crews: { id: string, nam
   return { crews: await db('crews').select('id', 'name'), sites: await db('sites').select('id', 'name', 'code') }
 }
 
-/** Adds people of an import. */
-export async function insertImportedPeople(db: Db, people: readonly ImportedPerson[], now: string): Promise<void> {
-  for (const person of people) await db('people').insert({ ...person, createdAt: now, updatedAt: now })
+/** Adds a person of an import. */
+export async function insertImportedPerson(db: Db, person: ImportedPerson, now: string): Promise<void> {
+  await db('people').insert({ ...person, createdAt: now, updatedAt: now })
 }
 
 /** Changes what an import says anew of a person. */
@@ -48,4 +48,17 @@ export interface HeldCredential { id: string, personId: string, typeId: string, 
 export async function listHeldCredentials(db: Db): Promise<HeldCredential[]> {
   return db('credentials').join('credentialTypes', 'credentialTypes.id', 'credentials.typeId').whereNull('credentialTypes.module')
     .select('credentials.id', 'personId', 'typeId', 'issuedOn', 'siteId', 'expiresOn', 'number', 'issuer', 'verification')
+}
+
+export type ImportKind = 'people' | 'credentials'
+
+/** What columns meant in earlier imports: plain header → field, null for "not used". */
+export async function listChosenColumns(db: Db, kind: ImportKind): Promise<Map<string, string | null>> {
+  const rows: { header: string, field: string }[] = await db('importColumns').where({ kind }).select('header', 'field')
+  return new Map(rows.map(row => [row.header, row.field || null]))
+}
+
+/** Remembers what columns mean, for the next file headed like this one. */
+export async function keepChosenColumns(db: Db, kind: ImportKind, chosen: ReadonlyMap<string, string | null>, now: string): Promise<void> {
+  for (const [header, field] of chosen) await db('importColumns').insert({ kind, header, field: field ?? '', chosenAt: now }).onConflict(['kind', 'header']).merge()
 }

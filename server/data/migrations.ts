@@ -11,6 +11,7 @@ import * as nearMisses from '../../migrations/0010_near_misses'
 import * as allowancesAndRetraining from '../../migrations/0011_allowances_and_retraining'
 import * as packets from '../../migrations/0012_packets'
 import * as renewalsAndTexts from '../../migrations/0013_renewals_and_texts'
+import * as importColumns from '../../migrations/0014_import_columns'
 
 /** Every migration, by the file name that the Knex command line records; a unit test keeps this equal to the folder. */
 export const migrations: Record<string, Knex.Migration> = {
@@ -26,6 +27,7 @@ export const migrations: Record<string, Knex.Migration> = {
   '0011_allowances_and_retraining.ts': allowancesAndRetraining,
   '0012_packets.ts': packets,
   '0013_renewals_and_texts.ts': renewalsAndTexts,
+  '0014_import_columns.ts': importColumns,
 }
 
 /** Knex reads migrations from here, because a built server has no migrations folder. */

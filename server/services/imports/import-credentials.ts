@@ -1,6 +1,6 @@
 import { randomUUID } from 'node:crypto'
 import { z } from 'zod'
-import { expiryOf, printedDateProblem } from '#shared/domain/validity'
+import { expiryOf, printedDateProblem, type PrintedDateProblem } from '#shared/domain/validity'
 import { email, line, text } from '#shared/schemas/common'
 import type { ImportAnswer, ImportQuery } from '#shared/schemas/imports'
 import { appendAudit } from '../../data/audit'
@@ -8,9 +8,9 @@ import { insertCredential, listStoredTypes, updateCredential, type StoredType } 
 import { listHeldCredentials, listImportedPeople, listPlaceNames, type HeldCredential } from '../../data/imports'
 import { randomCode } from '../hashing'
 import type { Work } from '../work'
-import { credentialColumns, mapColumns, nameCells, type NamedRow } from './columns'
-import { dateCell, gather, readRow, requireWhole, type Judged } from './import-run'
-import { readTable } from './read-table'
+import { credentialColumns } from './columns'
+import { dateCell, openImport, readRow, runImport, wrong, type Judged, type Reason, type Wrong } from './import-run'
+import type { Tell } from './progress'
 
 const credentialRow = (order: ImportQuery['dateOrder']) => z.object({
   badge: line(40).optional(),
@@ -29,34 +29,33 @@ type Plan = { kind: 'create', credential: NewHeld } | { kind: 'update', id: stri
 
 interface Known { people: Map<string, string>, types: Map<string, StoredType>, sites: Map<string, string>, held: Map<string, HeldCredential>, seen: Set<string> }
 
-const wrong = (field: string, why: string) => ({ field, why })
 const keyOf = (held: Pick<NewHeld, 'personId' | 'typeId' | 'issuedOn' | 'siteId'>) => [held.personId, held.typeId, held.issuedOn, held.siteId ?? ''].join('/')
 
-function personOf({ people }: Known, row: CredentialRow): string | { field: string, why: string } {
+function personOf({ people }: Known, row: CredentialRow): string | Wrong {
   const [one, other] = [row.badge && people.get(`badge ${row.badge.toLowerCase()}`), row.email && people.get(`email ${row.email}`)]
-  if (!row.badge && !row.email) return wrong('badge', 'badge or e-mail is needed')
-  if (row.badge && !one) return wrong('badge', 'nobody has it')
-  if (row.email && !other) return wrong('email', 'nobody has it')
-  if (one && other && one !== other) return wrong('email', 'belongs to another badge')
+  if (!row.badge && !row.email) return wrong('badge', 'personNeeded')
+  if (row.badge && !one) return wrong('badge', 'nobody')
+  if (row.email && !other) return wrong('email', 'nobody')
+  if (one && other && one !== other) return wrong('email', 'otherBadge')
   return (one || other)!
 }
 
-const printedWords = { needed: 'the date printed on the card is needed', refused: 'is computed from the type; leave it empty', notADate: 'is not a date', beforeIssue: 'is before the date of issue' }
+const printedReasons: Record<PrintedDateProblem, Reason> = { needed: 'printedNeeded', refused: 'printedRefused', notADate: 'notADate', beforeIssue: 'expiresBeforeIssue' }
 
 function judge(known: Known, row: CredentialRow): Judged<Plan> {
   const personId = personOf(known, row)
   if (typeof personId !== 'string') return personId
   const type = known.types.get(row.type.toLowerCase())
-  if (!type) return wrong('type', 'is not a credential type')
-  if (type.module) return wrong('type', 'is only issued by passing its module')
+  if (!type) return wrong('type', 'unknownType')
+  if (type.module) return wrong('type', 'byModuleOnly')
   const siteId = row.site ? known.sites.get(row.site.toLowerCase()) ?? null : null
-  if (row.site && !siteId) return wrong('site', 'is not a site')
-  if (type.perSite && !siteId) return wrong('site', 'this type counts at one site: name it')
+  if (row.site && !siteId) return wrong('site', 'unknownSite')
+  if (type.perSite && !siteId) return wrong('site', 'siteNeeded')
   const problem = printedDateProblem(type.validity, row.issuedOn, row.expiresOn)
-  if (problem) return wrong('expiresOn', printedWords[problem])
+  if (problem) return wrong('expiresOn', printedReasons[problem])
   const credential: NewHeld = { id: randomUUID(), personId, typeId: type.id, issuedOn: row.issuedOn, expiresOn: expiryOf(type.validity, row.issuedOn, row.expiresOn), number: row.number ?? null, issuer: row.issuer ?? null, siteId }
   const key = keyOf(credential)
-  if (known.seen.has(key)) return wrong('type', 'the same card stands in the file before')
+  if (known.seen.has(key)) return wrong('type', 'cardTwice')
   known.seen.add(key)
   const held = known.held.get(key)
   return held ? toUpdate(held, credential) : { plan: { kind: 'create', credential } }
@@ -66,7 +65,7 @@ function judge(known: Known, row: CredentialRow): Judged<Plan> {
 function toUpdate(held: HeldCredential, wanted: NewHeld): Judged<Plan> {
   const changes = { expiresOn: wanted.expiresOn, number: wanted.number ?? held.number, issuer: wanted.issuer ?? held.issuer }
   if (changes.expiresOn === held.expiresOn && changes.number === held.number && changes.issuer === held.issuer) return { unchanged: true }
-  if (held.verification !== 'unverified') return wrong('type', 'this card was judged already and differs; add the new card instead')
+  if (held.verification !== 'unverified') return wrong('type', 'judgedAlready')
   return { plan: { kind: 'update', id: held.id, changes } }
 }
 
@@ -81,11 +80,12 @@ async function knownTo(work: Work): Promise<Known> {
   }
 }
 
-async function save(work: Work, plans: Plan[]): Promise<void> {
+async function save(work: Work, plans: Plan[], tell: Tell): Promise<void> {
   await work.db.transaction(async (trx) => {
-    for (const plan of plans) {
+    for (const [index, plan] of plans.entries()) {
       if (plan.kind === 'update') await updateCredential(trx, plan.id, plan.changes)
       else await insertCredential(trx, { ...plan.credential, details: null, fileId: null, verification: 'unverified', cardCode: randomCode(), createdBy: work.actor.personId, createdAt: work.now })
+      await tell('saving', index + 1, plans.length)
     }
     await appendAudit(trx, { at: work.now, actorId: work.actor.personId, action: 'import.credentials', subject: { kind: 'company', id: '1' }, after: plans })
   })
@@ -93,17 +93,17 @@ async function save(work: Work, plans: Plan[]): Promise<void> {
 
 /** Takes outside cards from a CSV or XLSX; each waits to be verified. People by badge or e-mail, types by code or name, sites by code or name. */
 export async function importCredentials(work: Work, bytes: Buffer, query: ImportQuery): Promise<ImportAnswer> {
-  const table = await readTable(bytes)
-  const mapping = mapColumns(table.header, credentialColumns, [['badge', 'email'], ['type'], ['issuedOn']])
+  const kind = { kind: 'credentials' as const, meanings: { synonyms: credentialColumns, needed: [['badge', 'email'], ['type'], ['issuedOn']] } }
+  const table = await openImport(work, bytes, query, kind)
   const known = await knownTo(work)
   const schema = credentialRow(query.dateOrder)
-  const { plans, rejected, unchanged } = gather(nameCells(table, mapping), (row: NamedRow): Judged<Plan> => {
-    const read = readRow(schema, row)
-    return 'value' in read ? judge(known, read.value) : read
+  return runImport<Plan>(work, table, query, {
+    ...kind,
+    judge: (row) => {
+      const read = readRow(schema, row)
+      return 'value' in read ? judge(known, read.value) : read
+    },
+    isNew: plan => plan.kind === 'create',
+    save: (plans, tell) => save(work, plans, tell),
   })
-  const created = plans.filter(plan => plan.kind === 'create').length
-  const answer: ImportAnswer = { rows: table.rows.length, created, updated: plans.length - created, unchanged, rejected, mapping, asksDateOrder: rejected.some(row => row.why.startsWith('could be two dates')) }
-  requireWhole(answer, query)
-  if (!query.dryRun && plans.length > 0) await save(work, plans)
-  return answer
 }

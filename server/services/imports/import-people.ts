@@ -6,11 +6,11 @@ import { employerKinds, roles, type Role } from '#shared/domain/states'
 import { email, line } from '#shared/schemas/common'
 import type { ImportAnswer, ImportQuery } from '#shared/schemas/imports'
 import { appendAudit } from '../../data/audit'
-import { insertImportedPeople, listImportedPeople, listPlaceNames, updateImportedPerson, type ImportedPerson } from '../../data/imports'
+import { insertImportedPerson, listImportedPeople, listPlaceNames, updateImportedPerson, type ImportedPerson } from '../../data/imports'
 import type { Work } from '../work'
-import { mapColumns, nameCells, peopleColumns, type NamedRow } from './columns'
-import { dateCell, gather, readRow, requireWhole, type Judged } from './import-run'
-import { readTable } from './read-table'
+import { peopleColumns } from './columns'
+import { dateCell, openImport, readRow, runImport, wrong, type Judged, type Wrong } from './import-run'
+import type { Tell } from './progress'
 
 const roleWords: Record<string, Role> = { trabajador: 'worker', hand: 'worker', installer: 'worker', mayordomo: 'foreman', superintendente: 'superintendent' }
 const kindWords: Record<string, string> = { propio: 'own', temporal: 'temp', subcontractor: 'sub', subcontratista: 'sub', visitante: 'visitor' }
@@ -22,10 +22,10 @@ const personRow = (order: ImportQuery['dateOrder']) => z.object({
   badge: line(40).optional(),
   email: email.optional(),
   phone: line(40).optional(),
-  role: z.string().transform(word(roleWords)).pipe(z.enum(roles, 'is not a role')).optional(),
-  language: z.string().transform(word(languageWords)).pipe(z.enum(['en', 'es'], 'must be en or es')).optional(),
+  role: z.string().transform(word(roleWords)).pipe(z.enum(roles, 'notARole')).optional(),
+  language: z.string().transform(word(languageWords)).pipe(z.enum(['en', 'es'], 'notALanguage')).optional(),
   employer: line(120).optional(),
-  employerKind: z.string().transform(word(kindWords)).pipe(z.enum(employerKinds, 'must be own, temp, sub or visitor')).optional(),
+  employerKind: z.string().transform(word(kindWords)).pipe(z.enum(employerKinds, 'notAnEmployerKind')).optional(),
   trade: line(80).optional(),
   hiredOn: dateCell(order).optional(),
   leftOn: dateCell(order).optional(),
@@ -37,20 +37,18 @@ type Plan = { kind: 'create', person: ImportedPerson } | { kind: 'update', id: s
 
 interface Known { work: Work, byBadge: Map<string, ImportedPerson>, byEmail: Map<string, ImportedPerson>, crews: Map<string, string>, seen: Set<string> }
 
-const wrong = (field: string, why: string) => ({ field, why })
-
 /** The person that a row speaks of, by badge or e-mail; a reason when the two name different people. */
-function matchOf({ byBadge, byEmail }: Known, row: PersonRow): { match?: ImportedPerson } | { field: string, why: string } {
+function matchOf({ byBadge, byEmail }: Known, row: PersonRow): { match?: ImportedPerson } | Wrong {
   const [one, other] = [row.badge && byBadge.get(row.badge.toLowerCase()), row.email && byEmail.get(row.email)]
-  if (one && other && one.id !== other.id) return wrong('email', 'belongs to another badge')
+  if (one && other && one.id !== other.id) return wrong('email', 'otherBadge')
   return { match: one || other || undefined }
 }
 
 /** A file never makes a manager, changes a manager's role, or one's own. */
 function roleProblem(known: Known, row: PersonRow, match?: ImportedPerson) {
   if (!row.role || row.role === match?.role) return null
-  if (isGuardedRole(row.role) || (match && isGuardedRole(match.role))) return wrong('role', 'is given on the person\'s own page, with the password')
-  return match?.id === known.work.actor.personId ? wrong('role', 'nobody changes their own role') : null
+  if (isGuardedRole(row.role) || (match && isGuardedRole(match.role))) return wrong('role', 'guardedRole')
+  return match?.id === known.work.actor.personId ? wrong('role', 'ownRole') : null
 }
 
 function isRepeated({ seen }: Known, row: PersonRow): boolean {
@@ -60,9 +58,9 @@ function isRepeated({ seen }: Known, row: PersonRow): boolean {
   return isSeen
 }
 
-function toNewPerson({ work }: Known, row: PersonRow, crewId: string | null): ImportedPerson | { field: string, why: string } {
-  if (!row.name) return wrong('name', 'is needed for a new person')
-  if (!row.badge) return wrong('badge', 'is needed for a new person')
+function toNewPerson({ work }: Known, row: PersonRow, crewId: string | null): ImportedPerson | Wrong {
+  if (!row.name) return wrong('name', 'nameNeeded')
+  if (!row.badge) return wrong('badge', 'badgeNeeded')
   return {
     id: randomUUID(), name: row.name, sortName: sortNameOf(row.name), badge: row.badge, email: row.email ?? null, phone: row.phone ?? null,
     role: row.role ?? 'worker', language: row.language ?? work.company.language, employer: row.employer ?? work.company.name, employerKind: row.employerKind ?? 'own',
@@ -81,18 +79,18 @@ function toChanges(match: ImportedPerson, row: PersonRow, crewId: string | null)
 }
 
 function judge(known: Known, row: PersonRow): Judged<Plan> {
-  if (isRepeated(known, row)) return wrong('badge', 'the same person stands in the file before')
+  if (isRepeated(known, row)) return wrong('badge', 'personTwice')
   const found = matchOf(known, row)
-  if ('why' in found) return found
+  if ('code' in found) return found
   const crewId = row.crew ? known.crews.get(row.crew.toLowerCase()) ?? null : null
-  if (row.crew && !crewId) return wrong('crew', 'is not a crew')
+  if (row.crew && !crewId) return wrong('crew', 'unknownCrew')
   const problem = roleProblem(known, row, found.match)
   if (problem) return problem
   const [hired, left] = [row.hiredOn ?? found.match?.hiredOn ?? known.work.today, row.leftOn ?? found.match?.leftOn]
-  if (left && left < hired) return wrong('leftOn', 'is before the first day')
+  if (left && left < hired) return wrong('leftOn', 'leftBeforeHired')
   if (found.match) return toChanges(found.match, row, crewId)
   const person = toNewPerson(known, row, crewId)
-  return 'why' in person ? person : { plan: { kind: 'create', person } }
+  return 'code' in person ? person : { plan: { kind: 'create', person } }
 }
 
 async function knownTo(work: Work): Promise<Known> {
@@ -106,12 +104,15 @@ async function knownTo(work: Work): Promise<Known> {
   }
 }
 
-async function save(work: Work, plans: Plan[]): Promise<void> {
+async function save(work: Work, plans: Plan[], tell: Tell): Promise<void> {
   const created = plans.flatMap(plan => (plan.kind === 'create' ? [plan.person] : []))
   const updated = plans.flatMap(plan => (plan.kind === 'update' ? [plan] : []))
   await work.db.transaction(async (trx) => {
-    for (const { id, changes } of updated) await updateImportedPerson(trx, id, changes, work.now)
-    await insertImportedPeople(trx, created, work.now)
+    for (const [index, plan] of plans.entries()) {
+      if (plan.kind === 'update') await updateImportedPerson(trx, plan.id, plan.changes, work.now)
+      else await insertImportedPerson(trx, plan.person, work.now)
+      await tell('saving', index + 1, plans.length)
+    }
     await appendAudit(trx, { at: work.now, actorId: work.actor.personId, action: 'import.people', subject: { kind: 'company', id: '1' }, before: updated.map(({ id, before }) => ({ id, ...before })), after: { created, updated: updated.map(({ id, changes }) => ({ id, ...changes })) } })
   })
 }
@@ -121,17 +122,17 @@ async function save(work: Work, plans: Plan[]): Promise<void> {
  * lacks is filled in (worker, the company itself, its language, hired today). All rows or none, unless rejected ones may be skipped.
  */
 export async function importPeople(work: Work, bytes: Buffer, query: ImportQuery): Promise<ImportAnswer> {
-  const table = await readTable(bytes)
-  const mapping = mapColumns(table.header, peopleColumns, [['badge', 'email']])
+  const kind = { kind: 'people' as const, meanings: { synonyms: peopleColumns, needed: [['badge', 'email']] } }
+  const table = await openImport(work, bytes, query, kind)
   const known = await knownTo(work)
   const schema = personRow(query.dateOrder)
-  const { plans, rejected, unchanged } = gather(nameCells(table, mapping), (row: NamedRow): Judged<Plan> => {
-    const read = readRow(schema, row)
-    return 'value' in read ? judge(known, read.value) : read
+  return runImport<Plan>(work, table, query, {
+    ...kind,
+    judge: (row) => {
+      const read = readRow(schema, row)
+      return 'value' in read ? judge(known, read.value) : read
+    },
+    isNew: plan => plan.kind === 'create',
+    save: (plans, tell) => save(work, plans, tell),
   })
-  const created = plans.filter(plan => plan.kind === 'create').length
-  const answer: ImportAnswer = { rows: table.rows.length, created, updated: plans.length - created, unchanged, rejected, mapping, asksDateOrder: rejected.some(row => row.why.startsWith('could be two dates')) }
-  requireWhole(answer, query)
-  if (!query.dryRun && plans.length > 0) await save(work, plans)
-  return answer
 }

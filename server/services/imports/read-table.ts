@@ -3,8 +3,8 @@ import { readSheet } from 'read-excel-file/node'
 import { Refusal } from '../refusal'
 import { guardZip } from './zip-guard'
 
-/** A table as it was sent: rows are numbered as in the file, the header being 1; cells are trimmed text. */
-export interface Table { header: string[], rows: { number: number, cells: string[] }[] }
+/** A row as it was sent: numbered as in the file, from 1; cells are trimmed text. */
+export interface FileRow { number: number, cells: string[] }
 
 export const mostRows = 20_000
 
@@ -44,14 +44,13 @@ async function sheetCells(bytes: Buffer): Promise<string[][]> {
   }
 }
 
-/** Reads a CSV or an XLSX (judged by its first bytes). Empty rows are left out; throws 422 on a broken, empty or too long one. */
-export async function readTable(bytes: Buffer): Promise<Table> {
+/** Reads a CSV or an XLSX (judged by its first bytes), header and all. Empty rows are left out; throws 422 on a broken, empty or too long one. */
+export async function readRows(bytes: Buffer): Promise<FileRow[]> {
   const isZip = bytes.subarray(0, 4).equals(Buffer.from([0x50, 0x4B, 0x03, 0x04]))
   const all = (isZip ? await sheetCells(bytes) : csvCells(bytes))
     .map((cells, index) => ({ number: index + 1, cells: cells.map(cell => cell.trim()) }))
     .filter(row => row.cells.some(cell => cell !== ''))
-  const [header, ...rows] = all
-  if (!header || rows.length === 0) throw refuse('emptyFile', 'has no rows under its header')
-  if (rows.length > mostRows) throw refuse('tooManyRows', `at most ${mostRows} rows`)
-  return { header: header.cells, rows }
+  if (all.length < 2) throw refuse('emptyFile', 'has no rows under its header')
+  if (all.length > mostRows + 1) throw refuse('tooManyRows', `at most ${mostRows} rows`)
+  return all
 }

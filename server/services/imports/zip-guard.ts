@@ -18,7 +18,7 @@ function directoryOf(bytes: Buffer): { start: number, entries: number } {
 
 /**
  * Unpacks a workbook once with a hard limit, before anything else does: a small file that unfolds to gigabytes, or
- * one whose directory lies, is refused (422) and never reaches the reader.
+ * one whose directory lies, or one with macros, is refused (422) and never reaches the reader.
  */
 export function guardZip(bytes: Buffer): void {
   const { start, entries } = directoryOf(bytes)
@@ -27,6 +27,7 @@ export function guardZip(bytes: Buffer): void {
   for (let entry = 0; entry < entries; entry++) {
     if (at + 46 > bytes.length || bytes.readUInt32LE(at) !== 0x02014B50) throw refuse('brokenSheet', 'is not a whole workbook')
     const [method, packed, local] = [bytes.readUInt16LE(at + 10), bytes.readUInt32LE(at + 20), bytes.readUInt32LE(at + 42)]
+    if (/vbaProject\.bin$/i.test(bytes.toString('latin1', at + 46, at + 46 + bytes.readUInt16LE(at + 28)))) throw refuse('macroWorkbook', 'the workbook carries macros')
     at += 46 + bytes.readUInt16LE(at + 28) + bytes.readUInt16LE(at + 30) + bytes.readUInt16LE(at + 32)
     if (local + 30 > bytes.length) throw refuse('brokenSheet', 'is not a whole workbook')
     const from = local + 30 + bytes.readUInt16LE(local + 26) + bytes.readUInt16LE(local + 28)

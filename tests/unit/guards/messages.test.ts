@@ -1,4 +1,6 @@
 import { describe, expect, it } from 'vitest'
+import { credentialColumns, peopleColumns } from '../../../server/services/imports/columns'
+import { reasons } from '../../../server/services/imports/import-run'
 import { filesBelow, readProjectFile } from '../../support/project-files'
 
 type Messages = { [key: string]: string | Messages }
@@ -35,5 +37,10 @@ describe('messages', () => {
     const sources = ['pages', 'components', 'layouts', 'composables', 'stores'].flatMap(folder => filesBelow(folder).map(file => `${folder}/${file}`))
     const used = sources.flatMap(file => [...readProjectFile(file).matchAll(/(?<![\w.])\$?t\('([\w.]+)'/g)].map(match => `${file}: ${match[1]}`))
     expect(used.filter(use => !known.has(use.split(': ')[1]!))).toEqual([])
+  })
+  it('have words for every reason for which an import leaves a row out, and for every field', () => {
+    const known = load('en', 'credentials.json')
+    const needed = [...Object.keys(reasons).map(code => `imports.whys.${code}`), ...[...Object.keys(peopleColumns), ...Object.keys(credentialColumns), 'row'].map(field => `imports.fields.${field}`)]
+    expect(needed.filter(key => !(key in known))).toEqual([])
   })
 })
