@@ -1,9 +1,7 @@
-import { stringify } from 'csv-stringify/sync'
-import writeXlsxFile, { type SheetData } from 'write-excel-file/node'
 import { LEAST_SERVINGS, type ItemFlag } from '#shared/domain/item-review'
 import type { ItemKind, Language } from '#shared/domain/states'
 import type { ItemReviewLine } from '#shared/schemas/item-review'
-import { asPlainCell } from './credential-csv'
+import { inOnePiece, type Table } from './table-files'
 
 interface Words {
   fileName: string
@@ -46,24 +44,10 @@ function toCells(line: ItemReviewLine, language: Language): (string | number | n
   ]
 }
 
-/** A CSV (RFC 4180, UTF-8 with its mark, CRLF): shares from 0 to 1, numbers as numbers, text never a formula. */
-export const itemReviewCsv = (lines: readonly ItemReviewLine[], language: Language): string => stringify([
-  itemReviewWords[language].columns,
-  ...lines.map(line => toCells(line, language).map(cell => (typeof cell === 'string' ? asPlainCell(cell) : cell))),
-], { bom: true, record_delimiter: 'windows' })
+const widths = [24, 60, 10, 13, 26, 12, 12, 10, 10, 10, 34, 30, 30]
 
-const cellOf = (value: string | number | null) => {
-  if (value === null || value === '') return null
-  return typeof value === 'number' ? { value, type: Number } : { value, type: String }
-}
-
-/** A workbook of one sheet with a header that stays in view. */
-export async function itemReviewSheet(lines: readonly ItemReviewLine[], language: Language): Promise<Buffer> {
-  const { columns, sheet } = itemReviewWords[language]
-  const data: SheetData = [
-    columns.map(value => ({ value, type: String, fontWeight: 'bold' as const })),
-    ...lines.map(line => toCells(line, language).map(cellOf)),
-  ]
-  const widths = [24, 60, 10, 13, 26, 12, 12, 10, 10, 10, 34, 30, 30]
-  return writeXlsxFile(data, { sheet, columns: widths.map(width => ({ width })), stickyRowsCount: 1, orientation: 'landscape' }).toBuffer()
+/** The review as a table: shares from 0 to 1, numbers as numbers. */
+export function itemReviewTable(lines: readonly ItemReviewLine[], language: Language): Table {
+  const { columns, sheet, fileName } = itemReviewWords[language]
+  return { title: sheet, fileName, columns: columns.map((title, index) => ({ title, width: widths[index]! })), pieces: inOnePiece(lines.map(line => ({ cells: toCells(line, language) }))) }
 }

@@ -1,9 +1,7 @@
-import { stringify } from 'csv-stringify/sync'
-import writeXlsxFile, { type SheetData } from 'write-excel-file/node'
 import type { Language } from '#shared/domain/states'
 import type { TrainingKind } from '#shared/domain/training-minutes'
 import type { TrainingLine } from '../data/training-minutes'
-import { asPlainCell } from './credential-csv'
+import { inOnePiece, type Table } from './table-files'
 
 type Line = TrainingLine & { title: string }
 
@@ -20,23 +18,11 @@ export const trainingWords: Record<Language, { fileName: string, sheet: string, 
   },
 }
 
-/** A CSV (RFC 4180, UTF-8 with its mark, CRLF): dates as YYYY-MM-DD, minutes as numbers. */
-export const trainingCsv = (lines: Line[], language: Language): string => stringify([
-  trainingWords[language].columns,
-  ...lines.map(line => [asPlainCell(line.name), asPlainCell(line.badge), asPlainCell(line.employer), asPlainCell(line.crew ?? ''), line.doneOn, line.title, trainingWords[language].kinds[line.kind], line.minutes]),
-], { bom: true, record_delimiter: 'windows' })
+const widths = [26, 12, 24, 18, 13, 26, 20, 10]
 
-const textCell = (value: string | null) => (value ? { value, type: String } : null)
-
-/** A workbook of one sheet; dates are dates, text is never a formula. */
-export async function trainingSheet(lines: Line[], language: Language): Promise<Buffer> {
-  const { columns, sheet, kinds } = trainingWords[language]
-  const data: SheetData = [
-    columns.map(value => ({ value, type: String, fontWeight: 'bold' as const })),
-    ...lines.map(line => [
-      textCell(line.name), textCell(line.badge), textCell(line.employer), textCell(line.crew),
-      { value: new Date(`${line.doneOn}T00:00:00Z`), type: Date, format: 'yyyy-mm-dd' }, textCell(line.title), textCell(kinds[line.kind]), { value: line.minutes, type: Number },
-    ]),
-  ]
-  return writeXlsxFile(data, { sheet, columns: [26, 12, 24, 18, 13, 26, 20, 10].map(width => ({ width })), stickyRowsCount: 1 }).toBuffer()
+/** The lines as a table for payroll: dates as dates, minutes as numbers. */
+export function trainingTable(lines: readonly Line[], language: Language): Table {
+  const { columns, sheet, fileName, kinds } = trainingWords[language]
+  const rows = lines.map(line => ({ cells: [line.name, line.badge, line.employer, line.crew, { date: line.doneOn }, line.title, kinds[line.kind], line.minutes] }))
+  return { title: sheet, fileName, columns: columns.map((title, index) => ({ title, width: widths[index]! })), pieces: inOnePiece(rows) }
 }

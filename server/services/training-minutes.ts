@@ -1,3 +1,4 @@
+import type { ExportFormat } from '#shared/schemas/common'
 import { moduleBySlug } from '#shared/domain/curriculum'
 import { dateInZone } from '#shared/domain/dates'
 import { ASSESSOR_TALK_MINUTES, isReadingCounted, MINUTES_PER_HANDS_ON_STEP, quizMinutes } from '#shared/domain/training-minutes'
@@ -8,9 +9,9 @@ import { findLastFailedAt } from '../data/attempts'
 import type { Db } from '../data/database'
 import { listModuleCredentials } from '../data/module-credentials'
 import { findLastCounted, insertTrainingMinutes, listTrainingLines, type TrainingLine } from '../data/training-minutes'
-import { trainingCsv, trainingSheet, trainingWords } from '../documents/training-minutes'
-import type { Download } from './credential-export'
+import { trainingTable } from '../documents/training-minutes'
 import { badField, Refusal } from './refusal'
+import { exportTable, type Download } from './table-export'
 import type { Work } from './work'
 
 const counted = (work: Pick<Work, 'now' | 'company'>) => ({ doneOn: dateInZone(work.now, work.company.timeZone), doneAt: work.now })
@@ -75,12 +76,9 @@ export async function readOwnMinutes(work: Work, weekStart: string): Promise<{ w
 }
 
 /** The counted minutes as a file for payroll, in the reader's language. */
-export async function exportTrainingMinutes(work: Work, { format, ...query }: TrainingMinutesQuery & { format: 'csv' | 'xlsx' }): Promise<Download> {
+export async function exportTrainingMinutes(work: Work, { format, ...query }: TrainingMinutesQuery & { format: ExportFormat }): Promise<Download> {
   requirePeriod(query)
   const { language } = work.actor
   const lines = (await listTrainingLines(work.db, query)).map(line => ({ ...line, title: moduleBySlug(line.module)?.title[language] ?? line.module }))
-  const fileName = `${trainingWords[language].fileName}-${query.from}-${query.to}.${format}`
-  return format === 'csv'
-    ? { body: trainingCsv(lines, language), type: 'text/csv; charset=utf-8', fileName }
-    : { body: await trainingSheet(lines, language), type: 'application/vnd.openxmlformats-officedocument.spreadsheetml.sheet', fileName }
+  return exportTable(work, format, trainingTable(lines, language), `${query.from}-${query.to}`)
 }

@@ -1,5 +1,5 @@
 import type { H3Event } from 'h3'
-import type { Download } from '../services/credential-export'
+import type { Download } from '../services/table-export'
 
 /** Answers with a file to keep; its name is ours, in plain letters. */
 export function sendDownload(event: H3Event, { body, type, fileName }: Download, place: 'attachment' | 'inline' = 'attachment') {

@@ -38,6 +38,8 @@ const holders = {
   'credentials.add': everybody,
   'credentials.verify': ['safety'],
   'credentials.export': ['safety'],
+  /** Lists of people, sites, crews, briefings and clearance as files. */
+  'lists.export': ['safety', 'admin'],
   'reminders.send': ['safety'],
   'renewals.manage': ['safety'],
   'modules.invite': [...leads, 'safety'],

@@ -8,6 +8,9 @@ import { code, date, id } from './common'
  */
 export const clearanceQuery = z.strictObject({ site: id.optional(), date: date.optional(), duty: code.optional(), person: id.optional() })
 export type ClearanceQuery = z.infer<typeof clearanceQuery>
+/** The same with what the board narrows on the screen: a crew, a state, part of a name. */
+export const boardQuery = clearanceQuery.extend({ crew: id.optional(), state: z.enum(clearanceStates).optional(), q: z.string().trim().max(120).optional() })
+export type BoardQuery = z.infer<typeof boardQuery>
 
 const fix = z.discriminatedUnion('kind', [
   z.object({ kind: z.literal('verify'), type: z.string(), credentialId: z.string() }),

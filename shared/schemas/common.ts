@@ -28,3 +28,12 @@ export const paging = {
 /** The shape of every list. */
 export const listOf = <Item extends z.ZodType>(item: Item) => z.object({ items: z.array(item), total: z.number().int(), page: z.number().int(), perPage: z.number().int() })
 export interface Page<Item> { items: Item[], total: number, page: number, perPage: number }
+
+/** What a list is exported as. */
+export const exportFormats = ['csv', 'xlsx', 'pdf', 'ics'] as const
+export type ExportFormat = (typeof exportFormats)[number]
+/** What a list without days is exported as: a calendar of it would be empty. */
+export const tableFormats = ['csv', 'xlsx', 'pdf'] as const
+/** A list's own filters without its pages, and the format. */
+export const exportOf = <Shape extends z.ZodRawShape, Format extends ExportFormat>(query: z.ZodObject<Shape>, formats: readonly Format[]) =>
+  z.strictObject({ ...Object.fromEntries(Object.entries(query.shape).filter(([name]) => name !== 'page' && name !== 'perPage')) as Omit<Shape, 'page' | 'perPage'>, format: z.enum(formats) })

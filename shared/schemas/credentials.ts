@@ -1,6 +1,6 @@
 import { z } from 'zod'
 import { credentialStates, validityBases, type CredentialState } from '../domain/states'
-import { code, date, flag, id, line, listOf, paging, text } from './common'
+import { code, date, flag, id, line, listOf, paging, text, exportFormats } from './common'
 
 /** What a card may tell beyond its dates; never required to save, the law's gaps are shown as missing. */
 export const credentialDetails = z.strictObject({
@@ -61,7 +61,6 @@ export const credentialFilters = {
 export const credentialFilterQuery = z.strictObject(credentialFilters)
 export type CredentialFilters = z.infer<typeof credentialFilterQuery>
 export const credentialListQuery = z.strictObject({ ...credentialFilters, ...paging })
-export const exportFormats = ['csv', 'xlsx', 'pdf', 'ics'] as const
 export const credentialExportQuery = z.strictObject({ format: z.enum(exportFormats), ...credentialFilters })
 
 const bilingual = z.object({ en: z.string(), es: z.string() })

@@ -2,7 +2,7 @@ import { z } from 'zod'
 import { itemFlags } from '../domain/item-review'
 import { reliabilities } from '../domain/review-figures'
 import { itemKinds, type Language } from '../domain/states'
-import { code, language, text } from './common'
+import { code, language, text, tableFormats } from './common'
 
 /** Whose attempts are looked at: all, or those taken in one language from start to end. */
 export const takenIns = ['all', 'en', 'es'] as const
@@ -12,7 +12,7 @@ const takenIn = z.enum(takenIns).default('all')
 
 /** `language` is the one to answer in; the person's own unless said. */
 export const itemReviewQuery = z.strictObject({ module: code, takenIn, language: language.optional() })
-export const itemReviewExportQuery = itemReviewQuery.extend({ format: z.enum(['csv', 'xlsx']) })
+export const itemReviewExportQuery = itemReviewQuery.extend({ format: z.enum(tableFormats) })
 /** What a review is asked for. */
 export interface ItemReviewQuestion { module: string, takenIn: TakenIn, language: Language }
 

@@ -1,10 +1,10 @@
 import { z } from 'zod'
 import { trainingKinds } from '../domain/training-minutes'
-import { code, date, id, language, line, text } from './common'
+import { code, date, id, language, line, tableFormats, text } from './common'
 
 export const trainingMinutesQuery = z.strictObject({ from: date, to: date })
 export type TrainingMinutesQuery = z.infer<typeof trainingMinutesQuery>
-export const trainingExportQuery = trainingMinutesQuery.extend({ format: z.enum(['csv', 'xlsx']) })
+export const trainingExportQuery = trainingMinutesQuery.extend({ format: z.enum(tableFormats) })
 export const trainingMinutesView = z.object({
   from: z.string(), to: z.string(), total: z.number().int(),
   people: z.array(z.object({

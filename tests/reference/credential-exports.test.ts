@@ -14,9 +14,10 @@ import sharp from 'sharp'
 import { afterAll, beforeAll, describe, expect, test } from 'vitest'
 import type { CredentialFilters } from '#shared/schemas/credentials'
 import type { Db } from '../../server/data/database'
-import { exportCredentials, type ExportFormat } from '../../server/services/credential-export'
+import { exportCredentials } from '../../server/services/credential-export'
+import type { ExportFormat } from '#shared/schemas/common'
 import { makeCardPdf } from '../../server/services/cards'
-import { asPlainCell } from '../../server/documents/credential-csv'
+import { asPlainCell } from '../../server/documents/table-files'
 import { hold, openCredentialCompany, workOf } from '../support/credential-company'
 
 let db: Db

@@ -59,7 +59,7 @@ function byTrying(costs: Costs, row = 0, taken = 0): [number, number] {
   for (const [column, cost] of costs[row]!.entries()) {
     if (cost === null || taken & 1 << column) continue
     const [filled, paid] = byTrying(costs, row + 1, taken | 1 << column)
-    if (filled + 1 > best[0] || filled + 1 === best[0] && paid + cost < best[1]) best = [filled + 1, paid + cost]
+    if (filled + 1 > best[0] || (filled + 1 === best[0] && paid + cost < best[1])) best = [filled + 1, paid + cost]
   }
   return best
 }

@@ -1,3 +1,5 @@
+import type { Readable } from 'node:stream'
+import { text } from 'node:stream/consumers'
 import { parse } from 'csv-parse/sync'
 import { readSheet } from 'read-excel-file/node'
 import { beforeEach, describe, expect, it } from 'vitest'
@@ -244,7 +246,7 @@ describe('the exported table', () => {
     await strikeItem(await sara(20), teaching, { ...strike, reason: '=HYPERLINK("x")' })
     const { body, fileName, type } = await exportItemReview(await sara(), teaching, { ...question, format: 'csv' })
     expect([fileName, type]).toEqual(['question-review-stacking-2026-12-01.csv', 'text/csv; charset=utf-8'])
-    const rows: Record<string, string>[] = parse(String(body), { bom: true, columns: true })
+    const rows: Record<string, string>[] = parse((await text(body as Readable)), { bom: true, columns: true })
     expect(rows).toHaveLength(taught.bank.items.length)
     expect(rows.find(row => row.Number === must.id)).toMatchObject({ 'Question': must.stem.en, 'Must-know': 'yes', 'Times asked': '1', 'Share right': '0', '95 % from': '0', 'Needs a look': 'asked fewer than 30 times', 'Taken out because': '\'=HYPERLINK("x")' })
     expect(rows.find(row => row.Number === must.id)!.Picked).toContain(`${wrongOption.toUpperCase()} 1`)

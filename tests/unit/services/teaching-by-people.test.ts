@@ -1,3 +1,5 @@
+import type { Readable } from 'node:stream'
+import { text } from 'node:stream/consumers'
 import { beforeEach, describe, expect, it } from 'vitest'
 import type { Db } from '~~/server/data/database'
 import { listPausedQuizzes, listReadable, recordAssessorTalk } from '~~/server/services/assessor-talks'
@@ -156,7 +158,7 @@ describe('minutes of required training', () => {
     const sara = await workAfter(db, 'sara', 10, 'safety')
     const { body, fileName } = await exportTrainingMinutes(sara, { from: '2026-12-01', to: '2026-12-31', format: 'csv' })
     expect(fileName).toBe('training-minutes-2026-12-01-2026-12-31.csv')
-    expect(String(body).split('\r\n')[1]).toBe(`'=cmd(),nora,Test Walls,,2026-12-01,Stacking,lessons read,${lesson.minutes}`)
+    expect((await text(body as Readable)).split('\r\n')[1]).toBe(`'=cmd(),nora,Test Walls,,2026-12-01,Stacking,lessons read,${lesson.minutes}`)
     expect((await refusalOf(exportTrainingMinutes(sara, { from: '2026-12-02', to: '2026-12-01', format: 'csv' }))).code).toBe('wrongPeriod')
     expect((await readTrainingMinutes(sara, { from: '2026-11-01', to: '2026-11-30' })).people).toEqual([])
   })
