@@ -15,6 +15,7 @@ export const publicRoutes = [
   { method: 'POST', path: '/api/password-resets/:token', why: 'the mailed link is the proof' },
   { method: 'GET', path: '/api/checks/cards/:code', why: 'a stranger checks one card' },
   { method: 'GET', path: '/api/checks/types/:code', why: 'the card check says a type\'s name in words; names are no secret' },
+  { method: 'GET', path: '/api/checks/keys', why: 'whoever rechecks a card or a sheet by themselves needs the public keys' },
   { method: 'GET', path: '/api/checks/sheets/:hash', why: 'anybody with the link rechecks a sheet' },
   { method: 'GET', path: '/api/sites/by-code/:code', why: 'the poster\'s landing page' },
   { method: 'POST', path: '/api/briefings/:id/admissions', why: 'a phone at the briefing has only the code' },

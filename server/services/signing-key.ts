@@ -1,6 +1,7 @@
 import { createHash, createPrivateKey, createPublicKey, generateKeyPairSync, sign, verify, type KeyObject } from 'node:crypto'
 import { existsSync, mkdirSync, readFileSync, writeFileSync } from 'node:fs'
 import { dirname } from 'node:path'
+import type { PublicJwk } from '#shared/domain/recheck'
 import type { Settings } from './settings'
 
 /** The company's Ed25519 key (RFC 8032), and the earlier ones that its old signatures are still checked with. */
@@ -15,10 +16,15 @@ export interface SigningKey {
 
 const keys = new WeakMap<Settings, SigningKey>()
 
+/** The public half as JWK (RFC 8037). */
+export function publicJwkOf(publicKey: KeyObject): PublicJwk {
+  const { crv = '', kty = '', x = '' } = publicKey.export({ format: 'jwk' })
+  return { crv, kty, x }
+}
+
 /** RFC 7638 over the required members of an OKP key (RFC 8037), base64url. */
 function thumbprint(publicKey: KeyObject): string {
-  const { crv, kty, x } = publicKey.export({ format: 'jwk' })
-  return createHash('sha256').update(JSON.stringify({ crv, kty, x })).digest('base64url')
+  return createHash('sha256').update(JSON.stringify(publicJwkOf(publicKey))).digest('base64url')
 }
 
 function readPem(pem: string): SigningKey {
@@ -70,4 +76,10 @@ export function checkSignature(key: SigningKey, text: string, stored: { signatur
   const publicKey = stored.keyId ? key.known.get(stored.keyId) : undefined
   if (!publicKey) return 'unknownKey'
   return verify(null, Buffer.from(text), publicKey, Buffer.from(stored.signature, 'base64url')) ? 'valid' : 'invalid'
+}
+
+/** The keys that this company signs and signed with, the present one first. */
+export function listPublicKeys(settings: Settings): { keyId: string, key: PublicJwk, isPresent: boolean }[] {
+  const { keyId, known } = loadSigningKey(settings)
+  return [...known].map(([id, key]) => ({ keyId: id, key: publicJwkOf(key), isPresent: id === keyId })).sort((one, other) => Number(other.isPresent) - Number(one.isPresent))
 }

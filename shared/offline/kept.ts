@@ -9,9 +9,9 @@ export const cacheNames = { pages: 'pages', answers: 'answers', kept: 'kept', as
 /** Caches that hold something of a person. */
 export const personalCaches: readonly string[] = [cacheNames.pages, cacheNames.answers, cacheNames.kept]
 
-const keptPages = [/^\/$/, /^\/(learn|briefings|talks)(\/|$)/, /^\/(my-cards|crew|crew\/wall|more|questions|kept|near-misses)$/]
+const keptPages = [/^\/$/, /^\/(learn|briefings|talks)(\/|$)/, /^\/(my-cards|crew|crew\/wall|more|questions|kept|near-misses)$/, /^\/recheck$/]
 const keptAnswers = [
-  /^\/api\/(modules|talks)(\/|$)/, /^\/api\/(session|session\/sites|server-notes|my-day|company|credentials|training-minutes\/own)$/,
+  /^\/api\/(modules|talks)(\/|$)/, /^\/api\/(session|session\/sites|server-notes|my-day|company|credentials|training-minutes\/own|checks\/keys)$/,
   /^\/api\/sites\/[^/]+\/today$/,
 ]
 /** A quiz is never kept: it is drawn, timed and graded on the server. */

@@ -132,3 +132,7 @@ export const remindersAnswer = z.object({
 
 /** Filters that a calendar feed keeps; without them it holds everything its owner may see. */
 export const calendarBody = z.strictObject({ filters: credentialFilterQuery.optional() })
+
+/** The company's public Ed25519 keys as JWK (RFC 8037), by their RFC 7638 thumbprint. */
+export const publicKeysView = z.object({ company: z.string(), keys: z.array(z.object({ keyId: z.string(), key: z.object({ kty: z.string(), crv: z.string(), x: z.string() }), isPresent: z.boolean() })) })
+export type PublicKeysView = z.infer<typeof publicKeysView>

@@ -46,6 +46,7 @@ const visits: Visit[] = [
   { page: 'near-misses.vue', as: 'safety', path: () => '/near-misses' },
   { page: 'packet/[token].vue', as: 'nobody', path: ids => ids.packet },
   { page: 'packets.vue', as: 'safety', path: () => '/packets' },
+  { page: 'recheck.vue', as: 'nobody', path: () => '/recheck' },
   { page: 'renewals/index.vue', as: 'safety', path: () => '/renewals' },
   { page: 'renewals/[id].vue', as: 'safety', path: ids => `/renewals/${ids.renewal}` },
   { page: 'people/[id].vue', as: 'safety', path: ids => `/people/${ids.person}` },

@@ -205,7 +205,7 @@ test('the signed card names the last good second in the company\'s zone and is t
   const token = await makeCardToken(await workOf(db, 'hal', { settings }), id, 'https://walls.test')
   const [head, claims, signature] = token.split('.') as [string, string, string]
   expect(verify(null, Buffer.from(`${head}.${claims}`), loadSigningKey(settings).publicKey, Buffer.from(signature, 'base64url'))).toBe(true)
-  expect(JSON.parse(Buffer.from(claims, 'base64url').toString())).toMatchObject({ iss: 'https://walls.test', name: 'Hal Hand', type: 'first-aid-cpr', exp: Date.parse('2027-03-14T07:00:00Z') / 1000 })
+  expect(JSON.parse(Buffer.from(claims, 'base64url').toString())).toMatchObject({ iss: 'https://walls.test', name: 'First aid and CPR', credentialSubject: { identifier: [{ identityHash: 'Hal Hand' }] }, exp: Date.parse('2027-03-14T07:00:00Z') / 1000 })
   const waiting = await hold(db, { type: 'ladders', verification: 'unverified' })
   await expect(makeCardToken(await workOf(db, 'hal', { settings }), waiting, 'x')).rejects.toMatchObject({ kind: 'conflict', code: 'notCounting' })
 })
