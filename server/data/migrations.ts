@@ -12,6 +12,7 @@ import * as allowancesAndRetraining from '../../migrations/0011_allowances_and_r
 import * as packets from '../../migrations/0012_packets'
 import * as renewalsAndTexts from '../../migrations/0013_renewals_and_texts'
 import * as importColumns from '../../migrations/0014_import_columns'
+import * as mergedPeople from '../../migrations/0015_merged_people'
 
 /** Every migration, by the file name that the Knex command line records; a unit test keeps this equal to the folder. */
 export const migrations: Record<string, Knex.Migration> = {
@@ -28,6 +29,7 @@ export const migrations: Record<string, Knex.Migration> = {
   '0012_packets.ts': packets,
   '0013_renewals_and_texts.ts': renewalsAndTexts,
   '0014_import_columns.ts': importColumns,
+  '0015_merged_people.ts': mergedPeople,
 }
 
 /** Knex reads migrations from here, because a built server has no migrations folder. */

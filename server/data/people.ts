@@ -22,15 +22,17 @@ export interface Person {
   leftOn: string | null
   crewId: string | null
   under18Until: string | null
+  /** The entry that stays, when this one was given up as a duplicate. */
+  mergedInto: string | null
   version: number
   hasSignedIn: boolean
 }
 /** What is written of a person. */
-export type PersonRow = Omit<Person, 'id' | 'version' | 'hasSignedIn'>
+export type PersonRow = Omit<Person, 'id' | 'version' | 'hasSignedIn' | 'mergedInto'>
 
 type StoredPerson = Omit<Person, 'readsWell' | 'hasSignedIn'> & { readsWell: 0 | 1 | null, firstUsedAt: string | null }
 
-const columns = ['id', 'name', 'sortName', 'badge', 'email', 'phone', 'role', 'language', 'readsWell', 'employer', 'employerKind', 'trade', 'hiredOn', 'leftOn', 'crewId', 'under18Until', 'version'].map(name => `people.${name}`)
+const columns = ['id', 'name', 'sortName', 'badge', 'email', 'phone', 'role', 'language', 'readsWell', 'employer', 'employerKind', 'trade', 'hiredOn', 'leftOn', 'crewId', 'under18Until', 'mergedInto', 'version'].map(name => `people.${name}`)
 const toPerson = ({ firstUsedAt, readsWell, ...row }: StoredPerson): Person => ({ ...row, readsWell: readsWell === null ? null : readsWell === 1, hasSignedIn: firstUsedAt !== null })
 const withSignIn = (db: Db) => db('people').leftJoin('signInSecrets', 'signInSecrets.personId', 'people.id')
 

@@ -42,6 +42,17 @@ function dateText(date: string, language: Language): string {
   return new Intl.DateTimeFormat(language === 'es' ? 'es-US' : 'en-US', { weekday: 'short', month: 'short', day: 'numeric', year: 'numeric', timeZone: 'UTC' }).format(new Date(`${date}T12:00:00Z`))
 }
 
+/** The same for one person on paper: a heading, a line for each, and what to do. */
+export function reminderLines({ recipient: { language }, items }: Pick<Reminder, 'recipient' | 'items'>): { title: string, lines: string[], whatToDo: string } {
+  const said = words[language]
+  const sorted = [...items].sort((a, b) => a.expiresOn! < b.expiresOn! ? -1 : 1)
+  const ended = sorted.filter(item => item.daysLeft! < 0).length
+  return {
+    title: said.subject(ended, sorted.length - ended), whatToDo: said.whatToDo,
+    lines: sorted.map(item => said.line({ credential: item.typeName[language], date: dateText(item.expiresOn!, language), days: item.daysLeft! })),
+  }
+}
+
 /** The same in one short text message: the first that ends, how many more, and where to act. */
 export function reminderText({ recipient: { language }, items, origin }: Pick<Reminder, 'recipient' | 'items' | 'origin'>): string {
   const [first] = [...items].sort((a, b) => a.expiresOn! < b.expiresOn! ? -1 : 1)

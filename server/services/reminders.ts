@@ -5,7 +5,9 @@ import { getCompany } from '../data/company'
 import type { Db } from '../data/database'
 import { insertReminderMark, listHoldersWithForeman, listReminderMarks, listSafetyManagers, wasRemindedOn, type Addressee, type ReminderStep } from '../data/reminders'
 import { listCredentialIds, listCredentialsByIds } from '../data/views/credential-list'
-import { reminderMail, reminderText } from '../documents/reminder-mail'
+import { reminderLines, reminderMail, reminderText } from '../documents/reminder-mail'
+import { reminderStrips } from '../documents/reminder-strips'
+import { toCredentialQuery } from './credentials'
 import { sha256 } from './hashing'
 import { queueMail, toNumber } from './mail'
 import { badField, notFound } from './refusal'
@@ -118,4 +120,19 @@ export async function previewReminders(work: Work): Promise<{ items: { recipient
   const due = await listDue(db, today)
   const { digests } = await toDigests(db, due.map(({ item }) => item), today, await listSafetyManagers(db, today))
   return { items: digests.map(({ recipient, items }) => ({ recipient: recipient.email, name: recipient.name, ...reminderMail({ recipient, items, origin: settings.linkOrigin }) })) }
+}
+
+/** Paper strips of what ends within so many days or has ended, for the people the actor may see at a site; 404 when nothing does. */
+export async function printStrips(work: Work, { site, within }: { site?: string, within: number }): Promise<Buffer> {
+  const { db, today, actor, company } = work
+  const ids = await listCredentialIds(db, await toCredentialQuery(work, { site, within, includeExpired: true, effective: true, sort: 'person' }), actor.language)
+  const items: CredentialItem[] = []
+  for (let start = 0; start < ids.length; start += 500) items.push(...await listCredentialsByIds(db, ids.slice(start, start + 500), today))
+  if (items.length === 0) throw notFound('reminder')
+  const holders = await listHoldersWithForeman(db, [...new Set(items.map(item => item.personId))], today)
+  const strips = [...holders.values()].map(({ holder }) => {
+    const own = items.filter(item => item.personId === holder.personId)
+    return { name: holder.name, language: holder.language, crew: own[0]!.crew ?? null, sortName: own[0]!.sortName, ...reminderLines({ recipient: holder, items: own }) }
+  }).sort((one, other) => (one.crew ?? '').localeCompare(other.crew ?? '') || one.sortName.localeCompare(other.sortName))
+  return reminderStrips(strips, { language: actor.language, company: company.name, today })
 }

@@ -1,5 +1,5 @@
 import { z } from 'zod'
-import { listOf, paging } from './common'
+import { id, listOf, paging } from './common'
 
 export const mailStates = ['queued', 'sent', 'failed'] as const
 export const mailQuery = z.strictObject({ state: z.enum(mailStates).optional(), ...paging })
@@ -16,3 +16,6 @@ export const mailList = listOf(mailView).extend({ canSend: z.boolean(), canText:
 /** What the next run of the reminders would send. */
 export const reminderPreview = z.object({ items: z.array(z.object({ recipient: z.string(), name: z.string(), subject: z.string(), body: z.string() })) })
 export type ReminderPreview = z.infer<typeof reminderPreview>
+
+/** Whose strips: rostered at a site today, or everybody within reach; ending within so many days. */
+export const stripsQuery = z.strictObject({ site: id.optional(), within: z.coerce.number().int().min(0).max(366).default(60) })

@@ -50,7 +50,7 @@ export type PersonChanges = z.infer<typeof personChanges>
 export const personView = z.object({
   id: z.string(), name: z.string(), sortName: z.string(), badge: z.string(), email: z.string().nullable(), phone: z.string().nullable(),
   role: z.enum(roles), language, readsWell: z.boolean().nullable(), employer: z.string(), employerKind: z.enum(employerKinds), trade: z.string().nullable(),
-  hiredOn: z.string(), leftOn: z.string().nullable(), crewId: z.string().nullable(), version: z.number().int(),
+  hiredOn: z.string(), leftOn: z.string().nullable(), crewId: z.string().nullable(), mergedInto: z.string().nullable(), version: z.number().int(),
   /** Whether they ever signed in: a join link is only for people who did not. */
   hasSignedIn: z.boolean(),
 })
@@ -70,3 +70,10 @@ export const peopleQuery = z.strictObject({
 })
 export type PeopleQuery = z.infer<typeof peopleQuery>
 export const peopleView = listOf(personView)
+
+export const mergeBody = z.strictObject({ into: id })
+export type MergeBody = z.infer<typeof mergeBody>
+const mergeEntry = z.object({ id: z.string(), name: z.string(), badge: z.string() })
+/** Which entry is given up, which stays, and how many of its records move. */
+export const mergeView = z.object({ from: mergeEntry, into: mergeEntry, moves: z.object({ credentials: z.number().int(), training: z.number().int(), signIns: z.number().int(), work: z.number().int(), other: z.number().int() }) })
+export type MergeView = z.infer<typeof mergeView>

@@ -1,8 +1,9 @@
 import { beforeEach, describe, expect, test } from 'vitest'
 import { addDays } from '#shared/domain/dates'
 import type { Db } from '../../../server/data/database'
-import { queueReminders, reminderStep, sendReminders } from '../../../server/services/reminders'
+import { printStrips, queueReminders, reminderStep, sendReminders } from '../../../server/services/reminders'
 import { hold, openCredentialCompany, workOf } from '../../support/credential-company'
+import { pagesOf } from '../../support/read-pdf'
 import { testSettings } from '../../support/work'
 
 let db: Db
@@ -86,5 +87,19 @@ describe('sent by hand', () => {
     await expect(sendReminders(sam, ['nothing'])).rejects.toMatchObject({ kind: 'notFound' })
     await expect(sendReminders(sam, [await hold(db, { type: 'ladders' })])).rejects.toMatchObject({ kind: 'unprocessable' })
     expect(await mail()).toEqual([])
+  })
+})
+
+describe('paper strips', () => {
+  test('say in each person\'s own language what ends, one strip a person, and are not there when nothing ends', async () => {
+    await db('people').where({ id: 'ines' }).update({ language: 'es' })
+    await hold(db, { expiresOn: '2026-12-20' })
+    await hold(db, { type: 'ladders', expiresOn: '2026-11-28' })
+    await hold(db, { personId: 'ines', expiresOn: '2027-01-10' })
+    const [first] = await pagesOf(new Uint8Array(await printStrips(await workOf(db, 'sam'), { within: 60 })))
+    for (const words of ['Hal Hand', 'First aid and CPR: Sun, Dec 20, 2026 (19 days left)', 'Ladders: Sat, Nov 28, 2026 (3 days ago)', 'Inés Quispe', 'Primeros auxilios y RCP: dom, 10 de ene de 2027 (quedan 40 días)']) expect(first).toContain(words)
+    const crew = await pagesOf(new Uint8Array(await printStrips(await workOf(db, 'fay'), { within: 60 })))
+    expect(crew.join('')).not.toContain('Quispe')
+    await expect(printStrips(await workOf(db, 'fay'), { within: 60, site: 'nowhere' })).rejects.toMatchObject({ kind: 'notFound' })
   })
 })
