@@ -46,8 +46,10 @@ export async function listCrewMembers(db: Db, crewId: string): Promise<{ id: str
   return db('people').where({ crewId }).select('id', 'name')
 }
 
-/** The days between two dates on which a roster changes: the first day of an assignment, and the day after its last. */
-export async function listAssignmentDays(db: Db, from: string, to: string): Promise<string[]> {
-  const rows: { startsOn: string, endsOn: string | null }[] = await db('assignments').where('startsOn', '<=', to).where(query => query.whereNull('endsOn').orWhere('endsOn', '>=', from)).select('startsOn', 'endsOn')
-  return [...new Set(rows.flatMap(row => [row.startsOn, ...(row.endsOn ? [addDays(row.endsOn, 1)] : [])]))]
+/** The days between two dates on which a roster changes: the first day of an assignment or of somebody's work, and the day after the last. */
+export async function listRosterDays(db: Db, from: string, to: string): Promise<string[]> {
+  const rows: { startsOn: string, endsOn: string | null }[] = await db('assignments').where('startsOn', '<=', to).where(query => query.whereNull('endsOn').orWhere('endsOn', '>=', from)).distinct('startsOn', 'endsOn')
+  const hired: string[] = await db('people').whereBetween('hiredOn', [from, to]).distinct().pluck('hiredOn')
+  const left: string[] = await db('people').whereBetween('leftOn', [from, to]).distinct().pluck('leftOn')
+  return [...new Set([...rows.flatMap(row => [row.startsOn, ...(row.endsOn ? [addDays(row.endsOn, 1)] : [])]), ...hired, ...left])]
 }

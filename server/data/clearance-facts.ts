@@ -1,3 +1,4 @@
+import type { Knex } from 'knex'
 import type { ClearanceDuty, ClearancePerson, Hold } from '#shared/domain/clearance'
 import { dateInZone } from '#shared/domain/dates'
 import type { Learning } from '#shared/domain/missing'
@@ -47,6 +48,9 @@ function toScope(duty: string | null, site: string | null): RuleScope {
 /** The people whose facts are asked for: some ids, or all of the company. */
 export type Whom = readonly string[] | 'all'
 
+/** Narrows a query to them; any number of ids is one binding, where a list of them would meet SQLite's limit. */
+const only = (whom: Whom, column: string) => (query: Knex.QueryBuilder) => whom === 'all' ? query : query.whereRaw(`?? in (select value from json_each(?))`, [column, JSON.stringify(whom)])
+
 const byPerson = <Row>(rows: readonly (Row & { personId: string })[]): Map<string, Row[]> => {
   const found = new Map<string, Row[]>()
   for (const row of rows) {
@@ -59,28 +63,29 @@ const byPerson = <Row>(rows: readonly (Row & { personId: string })[]): Map<strin
 
 /** Employment and the hidden age limit, by person. */
 export async function mapClearancePeople(db: Db, whom: Whom): Promise<Map<string, ClearancePerson>> {
-  const rows: ClearancePerson[] = await db('people').modify(query => whom !== 'all' && query.whereIn('id', whom)).select('id', 'hiredOn', 'leftOn', 'under18Until')
+  const rows: ClearancePerson[] = await db('people').modify(only(whom, 'id')).select('id', 'hiredOn', 'leftOn', 'under18Until')
   return new Map(rows.map(row => [row.id, row]))
 }
 
 /** Every credential of these people, rejected and withdrawn ones too, by person. */
 export async function mapCredentials(db: Db, whom: Whom): Promise<Map<string, Credential[]>> {
   const rows: (Credential & { personId: string, details: string | null })[] = await db('credentials').join('credentialTypes', 'credentialTypes.id', 'credentials.typeId')
-    .modify(query => whom !== 'all' && query.whereIn('credentials.personId', whom))
+    .modify(only(whom, 'credentials.personId'))
     .select('credentials.id', 'credentials.personId', 'credentialTypes.code as type', 'credentials.issuedOn', 'credentials.expiresOn', 'credentials.verification', 'credentials.withdrawnOn', 'credentials.siteId', 'credentials.details')
-  return byPerson<Credential>(rows.map(({ details, ...row }) => ({ ...row, judgedOn: details ? (JSON.parse(details) as { judgedOn?: string }).judgedOn : null })))
+  for (const row of rows) row.judgedOn = row.details ? (JSON.parse(row.details) as { judgedOn?: string }).judgedOn : null
+  return byPerson<Credential>(rows)
 }
 
 /** Holds of these people, ended ones too, by person; their reasons stay in the database. */
 export async function mapHolds(db: Db, whom: Whom): Promise<Map<string, Hold[]>> {
-  const rows = await db('holds').modify(query => whom !== 'all' && query.whereIn('personId', whom)).select('personId', 'startsOn as from', 'endsOn as to')
+  const rows = await db('holds').modify(only(whom, 'personId')).select('personId', 'startsOn as from', 'endsOn as to')
   return byPerson<Hold>(rows)
 }
 
 /** The last recorded day on or before a date of doing each duty: by person, then by the duty's code. */
 export async function mapLastDutyDays(db: Db, whom: Whom, date: string): Promise<Map<string, Map<string, string>>> {
   const rows = await db('dutyDays').join('duties', 'duties.id', 'dutyDays.dutyId').where('doneOn', '<=', date)
-    .modify(query => whom !== 'all' && query.whereIn('personId', whom))
+    .modify(only(whom, 'personId'))
     .groupBy('personId', 'duties.code').select('personId', 'duties.code').max('doneOn as lastDoneOn')
   const found = new Map<string, Map<string, string>>()
   for (const row of rows as unknown as { personId: string, code: string, lastDoneOn: string }[]) {
@@ -91,7 +96,7 @@ export async function mapLastDutyDays(db: Db, whom: Whom, date: string): Promise
 
 /** The day, in the company's zone, on which each module's quiz was last passed: by person, then by module. */
 export async function mapLearning(db: Db, whom: Whom, timeZone: string): Promise<Map<string, Map<string, Learning>>> {
-  const rows = await db('attempts').where({ passed: true }).modify(query => whom !== 'all' && query.whereIn('personId', whom))
+  const rows = await db('attempts').where({ passed: true }).modify(only(whom, 'personId'))
     .groupBy('personId', 'module').select('personId', 'module').max('submittedAt as submittedAt')
   const found = new Map<string, Map<string, Learning>>()
   for (const row of rows as unknown as { personId: string, module: string, submittedAt: string }[]) {

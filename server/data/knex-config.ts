@@ -1,13 +1,23 @@
 import type { Knex } from 'knex'
 
-const toSnake = (name: string) => name.replace(/[A-Z]/g, letter => `_${letter.toLowerCase()}`)
-const toCamel = (name: string) => name.replace(/_([a-z0-9])/g, (_, letter: string) => letter.toUpperCase())
+/** Renames each name once: a list of rows has the same few names over and over. Columns and aliases are few, so this stays small. */
+function once(rename: (name: string) => string): (name: string) => string {
+  const known = new Map<string, string>()
+  return (name) => {
+    let renamed = known.get(name)
+    if (renamed === undefined) known.set(name, renamed = rename(name))
+    return renamed
+  }
+}
+const toSnake = once(name => name.replace(/[A-Z]/g, letter => `_${letter.toLowerCase()}`))
+const toCamel = once(name => name.replace(/_([a-z0-9])/g, (_, letter: string) => letter.toUpperCase()))
 
 /** Column names are snake_case in SQL and camelCase in code; rows are renamed here and nowhere else. */
 function camelRow(row: unknown): unknown {
   if (row === null || typeof row !== 'object' || Array.isArray(row) || Buffer.isBuffer(row)) return row
   const renamed: Record<string, unknown> = {}
-  for (const [key, value] of Object.entries(row)) renamed[toCamel(key)] = value
+  const raw = row as Record<string, unknown>
+  for (const key in raw) renamed[toCamel(key)] = raw[key]
   return renamed
 }
 

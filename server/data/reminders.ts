@@ -23,9 +23,9 @@ export async function wasRemindedOn(db: Db, date: string): Promise<boolean> {
   return (await db('reminderMarks').where({ remindedOn: date }).first('step')) !== undefined
 }
 
-/** Notes that a credential had this warning. */
-export async function insertReminderMark(db: Db, mark: { credentialId: string, step: ReminderStep, expiresOn: string, remindedOn: string }): Promise<void> {
-  await db('reminderMarks').insert(mark).onConflict(['credentialId', 'step', 'expiresOn']).ignore()
+/** Notes which credentials had which warning. */
+export async function insertReminderMarks(db: Db, marks: readonly { credentialId: string, step: ReminderStep, expiresOn: string, remindedOn: string }[]): Promise<void> {
+  for (let start = 0; start < marks.length; start += 500) await db('reminderMarks').insert(marks.slice(start, start + 500)).onConflict(['credentialId', 'step', 'expiresOn']).ignore()
 }
 
 const columns = ['people.id as personId', 'people.name', 'people.email', 'people.phone', 'people.language']

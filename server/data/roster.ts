@@ -27,6 +27,7 @@ export async function listRoster(db: Db, options: { date: string, siteId?: strin
   const rows = await db('people').leftJoin(own, 'own.personId', 'people.id').leftJoin(ofCrew, 'ofCrew.crewId', 'people.crewId')
     .where('people.hiredOn', '<=', date)
     .where(query => query.whereNull('people.leftOn').orWhere('people.leftOn', '>', date))
+    .modify(query => siteId !== undefined && query.whereRaw('people.id in (select person_id from assignments where site_id = :siteId and person_id is not null union select p.id from assignments a join people p on p.crew_id = a.crew_id where a.site_id = :siteId and a.starts_on <= :date and (a.ends_on is null or a.ends_on >= :date))', { siteId, date }))
     .whereRaw(siteId === undefined ? 'coalesce(own.site_id, of_crew.site_id) is not null' : 'coalesce(own.site_id, of_crew.site_id) = ?', siteId === undefined ? [] : [siteId])
     .orderBy(['people.sortName', 'people.id'])
     .select('people.id', 'people.name', 'people.sortName', 'people.badge', 'people.role', 'people.language', 'people.crewId', 'people.hiredOn', 'people.leftOn', 'people.under18Until', db.raw('coalesce(own.site_id, of_crew.site_id) as site_id')) as RosteredPerson[]

@@ -11,6 +11,7 @@ interface ReminderWords {
   line: (item: { credential: string, date: string, days: number }) => string
   whatToDo: string
   seeAll: string
+  more: (count: number) => string
 }
 
 const words: Record<Language, ReminderWords> = {
@@ -24,6 +25,7 @@ const words: Record<Language, ReminderWords> = {
     line: ({ credential, date, days }) => `${credential}: ${date} (${days < 0 ? `${-days} ${days === -1 ? 'day' : 'days'} ago` : days === 0 ? 'today' : `${days} ${days === 1 ? 'day' : 'days'} left`})`,
     whatToDo: 'Book the renewal now. When you have the new card, add it with a photo.',
     seeAll: 'See them all:',
+    more: count => `- and ${count} more`,
   },
   es: {
     subject: (expired, ahead) => [expired && `${expired} vencidas`, ahead && `${ahead} por vencer`].filter(Boolean).join(', ').replace(/^/, 'Credenciales: '),
@@ -35,12 +37,15 @@ const words: Record<Language, ReminderWords> = {
     line: ({ credential, date, days }) => `${credential}: ${date} (${days < 0 ? `hace ${-days} ${days === -1 ? 'día' : 'días'}` : days === 0 ? 'hoy' : days === 1 ? 'queda 1 día' : `quedan ${days} días`})`,
     whatToDo: 'Programe la renovación ahora. Cuando tenga la tarjeta nueva, agréguela con una foto.',
     seeAll: 'Véalas todas:',
+    more: count => `- y ${count} más`,
   },
 }
 
-function dateText(date: string, language: Language): string {
-  return new Intl.DateTimeFormat(language === 'es' ? 'es-US' : 'en-US', { weekday: 'short', month: 'short', day: 'numeric', year: 'numeric', timeZone: 'UTC' }).format(new Date(`${date}T12:00:00Z`))
-}
+const formatOf = (tag: string) => new Intl.DateTimeFormat(tag, { weekday: 'short', month: 'short', day: 'numeric', year: 'numeric', timeZone: 'UTC' })
+const formats: Record<Language, Intl.DateTimeFormat> = { en: formatOf('en-US'), es: formatOf('es-US') }
+const dateText = (date: string, language: Language) => formats[language].format(new Date(`${date}T12:00:00Z`))
+/** Lines of each part that a mail holds; the rest is behind its link. */
+const mostLines = 200
 
 /** The same for one person on paper: a heading, a line for each, and what to do. */
 export function reminderLines({ recipient: { language }, items }: Pick<Reminder, 'recipient' | 'items'>): { title: string, lines: string[], whatToDo: string } {
@@ -71,7 +76,7 @@ export function reminderMail({ recipient, items, origin }: Reminder): { subject:
   const isOwn = items.every(item => item.personId === personId)
   const sorted = [...items].sort((a, b) => a.expiresOn! < b.expiresOn! ? -1 : 1)
   const lineOf = (item: CredentialItem) => `- ${isOwn ? '' : `${item.sortName}: `}${said.line({ credential: item.typeName[language], date: dateText(item.expiresOn!, language), days: item.daysLeft! })}`
-  const part = (title: string, part: CredentialItem[]) => part.length === 0 ? [] : [`${title} (${part.length})`, ...part.map(lineOf), '']
+  const part = (title: string, part: CredentialItem[]) => part.length === 0 ? [] : [`${title} (${part.length})`, ...part.slice(0, mostLines).map(lineOf), ...(part.length > mostLines ? [said.more(part.length - mostLines)] : []), '']
   const expired = sorted.filter(item => item.daysLeft! < 0)
   const ahead = sorted.filter(item => item.daysLeft! >= 0)
   const link = origin ? [`${said.seeAll} ${origin}${isOwn ? '/my-cards' : '/credentials?within=60&includeExpired=true'}`] : []

@@ -1,5 +1,5 @@
 import { Readable } from 'node:stream'
-import { stringify } from 'csv-stringify'
+import { stringify } from 'csv-stringify/sync'
 import ical, { ICalAlarmType } from 'ical-generator'
 import type { Content } from 'pdfmake/interfaces'
 import writeXlsxFile, { type SheetData } from 'write-excel-file/node'
@@ -53,15 +53,16 @@ function sheetCell(cell: Cell) {
   return cell ? { value: cell, type: String } : null
 }
 
-/** A CSV (RFC 4180, UTF-8 with its mark, CRLF), written while the rows arrive: dates as YYYY-MM-DD, numbers as numbers, text never a formula. */
+/** A CSV (RFC 4180, UTF-8 with its mark, CRLF), written piece by piece while the rows arrive: dates as YYYY-MM-DD, numbers as numbers, text never a formula. */
 export function tableCsv({ columns, pieces }: Table): Readable {
-  async function* rows() {
-    yield columns.map(column => column.title)
+  const options = { record_delimiter: 'windows' as const, quoted_match: /[\r\n]/ }
+  async function* text() {
+    yield stringify([columns.map(column => column.title)], { ...options, bom: true })
     for await (const piece of pieces) {
-      for (const row of piece) yield row.cells.map(csvCell)
+      if (piece.length > 0) yield stringify(piece.map(row => row.cells.map(csvCell)), options)
     }
   }
-  return Readable.from(rows()).pipe(stringify({ bom: true, record_delimiter: 'windows', quoted_match: /[\r\n]/ }))
+  return Readable.from(text(), { objectMode: false, highWaterMark: 1024 * 1024 })
 }
 
 /** A workbook of one sheet with a header that stays in view; dates are dates, text is never a formula. */

@@ -1,7 +1,8 @@
-import { type Clearance, clearanceOf, credentialsByType } from '#shared/domain/clearance'
+import { type Clearance, clearanceOf, type ClearancePerson, credentialsByType, type Hold } from '#shared/domain/clearance'
 import { dateInZone } from '#shared/domain/dates'
 import type { ModuleMinutes } from '#shared/domain/missing'
 import { prepareRules } from '#shared/domain/rules'
+import type { Credential } from '#shared/domain/validity'
 import type { ClearanceQuery, ClearanceView } from '#shared/schemas/clearance'
 import {
   listClearanceDuties, listRules, mapClearancePeople, mapClearanceTypes, mapCredentials, mapHolds, mapLastDutyDays, mapLearning, type Whom,
@@ -23,6 +24,8 @@ export interface ClearanceBook {
   duties: string[]
   /** May this person do this duty at this site (null: away from any) on the book's date? An unknown person is not cleared. */
   ask: (personId: string, duty: string, siteId: string | null) => Clearance
+  /** What the answers about a person rest on; undefined for who is unknown. */
+  factsOf: (personId: string) => { person: ClearancePerson, credentials: readonly Credential[], holds: readonly Hold[] } | undefined
   /** The same on a later date, as far as is known on the book's date. */
   askOn: (personId: string, duty: string, siteId: string | null, onDate: string) => Clearance
 }
@@ -35,7 +38,8 @@ export async function openClearanceBook(db: Db, options: { whom: Whom, date: str
   const types = await mapClearanceTypes(db)
   const rules = prepareRules(await listRules(db))
   const people = await mapClearancePeople(db, whom)
-  const held = new Map([...await mapCredentials(db, whom)].map(([personId, list]) => [personId, credentialsByType(list)]))
+  const credentials = await mapCredentials(db, whom)
+  const held = new Map([...credentials].map(([personId, list]) => [personId, credentialsByType(list)]))
   const holds = await mapHolds(db, whom)
   const lastDays = await mapLastDutyDays(db, whom, date)
   const learning = await mapLearning(db, whom, timeZone)
@@ -55,7 +59,11 @@ export async function openClearanceBook(db: Db, options: { whom: Whom, date: str
       moduleMinutes,
     })
   }
-  return { date, duties: duties.map(duty => duty.code), askOn, ask: (personId, code, siteId) => askOn(personId, code, siteId, date) }
+  const factsOf: ClearanceBook['factsOf'] = (id) => {
+    const person = people.get(id)
+    return person && { person, credentials: credentials.get(id) ?? [], holds: holds.get(id) ?? [] }
+  }
+  return { date, duties: duties.map(duty => duty.code), factsOf, askOn, ask: (personId, code, siteId) => askOn(personId, code, siteId, date) }
 }
 
 /** One person as if rostered at the site asked about, otherwise where they are that day, otherwise nowhere. 404 out of reach. */

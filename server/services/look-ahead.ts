@@ -3,9 +3,9 @@ import { addDays } from '#shared/domain/dates'
 import { changeDays, weekOf } from '#shared/domain/look-ahead'
 import type { CredentialItem } from '#shared/schemas/credentials'
 import type { LookAheadQuery, LookAheadView } from '#shared/schemas/look-ahead'
-import { listAssignmentDays } from '../data/assignments'
-import { mapClearancePeople, mapCredentials, mapHolds } from '../data/clearance-facts'
+import { listRosterDays } from '../data/assignments'
 import { listCrews, type Crew } from '../data/crews'
+import type { Db } from '../data/database'
 import { isWithin } from '../data/reach'
 import { getSite } from '../data/sites'
 import { listCredentialIds, listCredentialsByIds } from '../data/views/credential-list'
@@ -17,7 +17,7 @@ import { expectedAnywhere, type ExpectedPerson } from './roster'
 import type { Work } from './work'
 
 type CrewLine = LookAheadView['crews'][number]
-interface Walk { days: string[], rosterOn: (day: string) => Promise<ExpectedPerson[]>, book: ClearanceBook }
+interface Walk { days: string[], rosterOn: (day: string) => readonly ExpectedPerson[], book: ClearanceBook }
 
 async function listEvents(work: Work, query: LookAheadQuery, days: number): Promise<CredentialItem[]> {
   const filters = await toCredentialQuery(work, { within: days, sort: 'expiresOn', ...(query.site && { site: query.site }) })
@@ -44,10 +44,10 @@ function renewals(crew: Crew, people: readonly ExpectedPerson[], { book, days }:
   }))
 }
 
-async function lookAtCrew(crew: Crew, walk: Walk, sites: ReadonlyMap<string, string>, isWanted: (siteId: string) => boolean): Promise<CrewLine[]> {
+function lookAtCrew(crew: Crew, walk: Walk, sites: ReadonlyMap<string, string>, isWanted: (siteId: string) => boolean): CrewLine[] {
   const lines = new Map<string, CrewLine>()
   for (const day of walk.days) {
-    const people = (await walk.rosterOn(day)).filter(person => person.crewId === crew.id && isWanted(person.siteId))
+    const people = walk.rosterOn(day).filter(person => isWanted(person.siteId))
     for (const siteId of new Set(people.map(person => person.siteId))) {
       const line = lines.get(siteId) ?? { crewId: crew.id, name: crew.name, siteId, site: sites.get(siteId) ?? '', firstShortOn: null, short: [], renew: [] }
       lines.set(siteId, line)
@@ -60,10 +60,29 @@ async function lookAtCrew(crew: Crew, walk: Walk, sites: ReadonlyMap<string, str
   return [...lines.values()]
 }
 
+/** The rosters between two dates by crew, read once for each day on which one changes. */
+async function readRosters(db: Db, from: string, to: string) {
+  const starts = [...new Set([from, ...await listRosterDays(db, from, to)])].filter(day => day >= from && day <= to).sort()
+  const rosters: Map<string, ExpectedPerson[]>[] = []
+  for (const day of starts) {
+    const byCrew = new Map<string, ExpectedPerson[]>()
+    for (const person of await expectedAnywhere(db, day)) {
+      if (person.crewId) byCrew.set(person.crewId, [...byCrew.get(person.crewId) ?? [], person])
+    }
+    rosters.push(byCrew)
+  }
+  return {
+    starts,
+    /** Everybody who is in the crew on some day. */
+    everIn: (crewId: string) => new Set(rosters.flatMap(byCrew => (byCrew.get(crewId) ?? []).map(person => person.id))),
+    on: (crewId: string, day: string) => rosters[starts.findLastIndex(start => start <= day)]?.get(crewId) ?? [],
+  }
+}
+
 /**
  * The coming weeks within the actor's reach: whose cards end when, the first day on which each crew can't fill its
  * usual places and what to renew by when to prevent it, and the load on classes by week. Walks the days on which
- * something changes, not every day. 404 for a site out of reach.
+ * something changes for a crew, not every day. 404 for a site out of reach.
  */
 export async function readLookAhead(work: Work, query: LookAheadQuery): Promise<LookAheadView> {
   const { db, today } = work
@@ -71,23 +90,19 @@ export async function readLookAhead(work: Work, query: LookAheadQuery): Promise<
   if (query.site !== undefined && (!await getSite(db, query.site) || !isWithin(reach.siteIds, query.site))) throw notFound('site')
   const to = addDays(today, query.weeks * 7)
   const crews = (await listCrews(db, today)).filter(crew => isWithin(reach.crewIds, crew.id) && crew.duties.length > 0)
-  const whom = [...new Set((await Promise.all([today, to].map(day => expectedAnywhere(db, day)))).flat().filter(person => crews.some(crew => crew.id === person.crewId)).map(person => person.id))]
+  const rosters = await readRosters(db, today, to)
+  const members = new Map(crews.map(crew => [crew.id, [...rosters.everIn(crew.id)]]))
+  const whom = [...members.values()].flat()
   const book = await openClearanceBook(db, { whom, date: today })
-  const [people, held, holds] = [await mapClearancePeople(db, whom), await mapCredentials(db, whom), await mapHolds(db, whom)]
-  const lastDays = (id: string) => crews.flatMap(crew => crew.duties.map(({ duty }) => book.ask(id, duty, null).until))
-  const days = changeDays(whom.flatMap((id) => {
-    const person = people.get(id)
-    return person ? [{ credentials: held.get(id) ?? [], holds: holds.get(id) ?? [], lastDays: lastDays(id), hiredOn: person.hiredOn, leftOn: person.leftOn ?? null }] : []
-  }), today, to, await listAssignmentDays(db, today, to))
-  const rosters = new Map<string, Promise<ExpectedPerson[]>>()
-  const rosterOn = (day: string) => {
-    const roster = rosters.get(day) ?? expectedAnywhere(db, day)
-    rosters.set(day, roster)
-    return roster
-  }
+  const changesOf = (crew: Crew) => changeDays(members.get(crew.id)!.flatMap((id) => {
+    const facts = book.factsOf(id)
+    if (!facts) return []
+    const { person: { hiredOn, leftOn = null }, credentials, holds } = facts
+    return [{ credentials, holds, lastDays: crew.duties.map(({ duty }) => book.ask(id, duty, null).until), hiredOn, leftOn }]
+  }), today, to, rosters.starts)
   const sites = await mapSiteNames(db)
-  const lines: CrewLine[] = []
-  for (const crew of crews) lines.push(...await lookAtCrew(crew, { days, rosterOn, book }, sites, siteId => query.site === undefined || siteId === query.site))
+  const isWanted = (siteId: string) => query.site === undefined || siteId === query.site
+  const lines = crews.flatMap(crew => lookAtCrew(crew, { days: changesOf(crew), rosterOn: day => rosters.on(crew.id, day), book }, sites, isWanted))
   const events = (await listEvents(work, query, query.weeks * 7)).map(({ id, personId, person, crew, type, typeName, expiresOn }) => ({ date: expiresOn!, personId, person, crew: crew ?? null, type, typeName, credentialId: id }))
   const weeks = new Map<string, Map<string, number>>()
   for (const { date, type } of events) {

@@ -3,7 +3,7 @@ import type { CredentialItem } from '#shared/schemas/credentials'
 import { appendAudit } from '../data/audit'
 import { getCompany } from '../data/company'
 import type { Db } from '../data/database'
-import { insertReminderMark, listHoldersWithForeman, listReminderMarks, listSafetyManagers, wasRemindedOn, type Addressee, type ReminderStep } from '../data/reminders'
+import { insertReminderMarks, listHoldersWithForeman, listReminderMarks, listSafetyManagers, wasRemindedOn, type Addressee, type ReminderStep } from '../data/reminders'
 import { listCredentialIds, listCredentialsByIds } from '../data/views/credential-list'
 import { reminderLines, reminderMail, reminderText } from '../documents/reminder-mail'
 import { reminderStrips } from '../documents/reminder-strips'
@@ -67,9 +67,11 @@ async function listDue(db: Db, today: string): Promise<{ item: CredentialItem, s
 /** The holders' own lines as text messages, where the company sends them and a phone number is known. */
 async function queueTexts(db: Db, items: CredentialItem[], { today, origin, now }: { today: string, origin: string, now: string }): Promise<void> {
   const holders = await listHoldersWithForeman(db, [...new Set(items.map(item => item.personId))], today)
+  const byHolder = new Map<string, CredentialItem[]>()
+  for (const item of items) byHolder.set(item.personId, [...byHolder.get(item.personId) ?? [], item])
   for (const { holder } of holders.values()) {
     if (!holder.phone || toNumber(holder.phone) === null) continue
-    const body = reminderText({ recipient: holder, items: items.filter(item => item.personId === holder.personId), origin })
+    const body = reminderText({ recipient: holder, items: byHolder.get(holder.personId)!, origin })
     await queueMail(db, { key: `reminder-text:${today}:${holder.personId}`, channel: 'text', recipient: holder.phone, personId: holder.personId, subject: '', body, now })
   }
 }
@@ -90,7 +92,7 @@ export async function queueReminders(db: Db, settings: Settings): Promise<number
   await db.transaction(async (trx) => {
     await queueDigests(trx, digests, { keyOf: digest => `reminder:${today}:${digest.recipient.personId}`, origin: settings.linkOrigin, now })
     if (company.textReminders) await queueTexts(trx, due.map(({ item }) => item), { today, origin: settings.linkOrigin, now })
-    for (const { item, step } of due) await insertReminderMark(trx, { credentialId: item.id, step, expiresOn: item.expiresOn!, remindedOn: today })
+    await insertReminderMarks(trx, due.map(({ item, step }) => ({ credentialId: item.id, step, expiresOn: item.expiresOn!, remindedOn: today })))
   })
   return digests.length
 }

@@ -36,16 +36,36 @@ export function parseInstant(text: string): Instant {
 }
 
 /**
+ * Keeps answers about the same days: lists ask for the same few thousand over and over, and the calendar library is
+ * thorough rather than fast. Forgets all when it holds `most`.
+ */
+function remembered<Second extends number | string, Answer>(answer: (first: string, second: Second) => Answer, most = 20_000): (first: string, second: Second) => Answer {
+  const known = new Map<string, Answer>()
+  return (first, second) => {
+    const key = `${first} ${second}`
+    const found = known.get(key)
+    if (found !== undefined) return found
+    const made = answer(first, second)
+    if (known.size >= most) known.clear()
+    known.set(key, made)
+    return made
+  }
+}
+const monthsOn = remembered((date: CalendarDate, months: number) => toText(toPlainDate(date).add({ months }, { overflow: 'constrain' })))
+const daysOn = remembered((date: CalendarDate, days: number) => toText(toPlainDate(date).add({ days })))
+const daysApart = remembered((from: CalendarDate, to: CalendarDate) => toPlainDate(from).until(toPlainDate(to), { largestUnit: 'day' }).days)
+
+/**
  * The same day of the month, some months on (or back, when negative). A day that does not exist falls back
  * to the month's last day: 31 Jan + 1 = 28 or 29 Feb. Anchor on the first date; chained steps drift.
  */
 export function addMonths(date: CalendarDate, months: number): CalendarDate {
-  return toText(toPlainDate(date).add({ months }, { overflow: 'constrain' }))
+  return monthsOn(date, months)
 }
 
 /** The date some days on, or back when negative. */
 export function addDays(date: CalendarDate, days: number): CalendarDate {
-  return toText(toPlainDate(date).add({ days }))
+  return daysOn(date, days)
 }
 
 /** The last day of the date's month. */
@@ -56,7 +76,7 @@ export function endOfMonth(date: CalendarDate): CalendarDate {
 
 /** Whole days from the first date to the second: 0 on the same day, negative when the second is earlier. */
 export function daysBetween(from: CalendarDate, to: CalendarDate): number {
-  return toPlainDate(from).until(toPlainDate(to), { largestUnit: 'day' }).days
+  return daysApart(from, to)
 }
 
 /** Day of the week, 1 for Monday to 7 for Sunday. */

@@ -21,7 +21,7 @@ export interface CredentialQuery {
   crewId?: string
   type?: string
   personId?: string
-  ids?: string[]
+  ids?: readonly string[]
   isEffective?: boolean
   q?: string
   sort?: string
@@ -53,7 +53,7 @@ function narrow(db: Db, sql: CredentialSql, query: CredentialQuery) {
     .leftJoin('crews as w', 'w.id', 'p.crewId')
     .leftJoin('sites as s', 's.id', 'c.siteId')
   if (!scope.all) list.where(own => own.where('c.personId', scope.personId).orWhereIn('p.crewId', scope.crewIds))
-  if (query.ids) list.whereIn('c.id', query.ids)
+  if (query.ids) list.whereRaw('c.id in (select value from json_each(?))', [JSON.stringify(query.ids)])
   if (query.personId) list.where('c.personId', query.personId)
   if (query.crewId) list.where('p.crewId', query.crewId)
   if (query.type) list.where('t.code', query.type)
@@ -102,7 +102,7 @@ const columnsOf = (db: Db, sql: CredentialSql, language: 'en' | 'es') => [
 function listed(db: Db, query: CredentialQuery, language: 'en' | 'es') {
   const sql = credentialSql(parseCalendarDate(query.today))
   const rows = narrow(db, sql, query).select(columnsOf(db, sql, language))
-  return db.with('asked', db.raw(sql.asked)).with('limited', db.raw(sql.limited)).with('listed', rows).from('listed')
+  return db.withMaterialized('asked', db.raw(sql.asked)).withMaterialized('limited', db.raw(sql.limited)).with('listed', rows).from('listed')
 }
 
 /** One page of a list, in the order asked for (by person, or by expiry with `within`), and how many there are in all. */
@@ -116,7 +116,7 @@ export async function listCredentials(db: Db, query: CredentialQuery, options: {
 /** How many credentials the filters leave. */
 export async function countCredentials(db: Db, query: CredentialQuery): Promise<number> {
   const sql = credentialSql(parseCalendarDate(query.today))
-  const [row] = await db.with('asked', db.raw(sql.asked)).with('limited', db.raw(sql.limited)).with('counted', narrow(db, sql, query).count({ total: '*' })).from('counted').select('total')
+  const [row] = await db.withMaterialized('asked', db.raw(sql.asked)).withMaterialized('limited', db.raw(sql.limited)).with('counted', narrow(db, sql, query).count({ total: '*' })).from('counted').select('total')
   return Number(row.total)
 }
 
@@ -126,12 +126,48 @@ export async function listCredentialIds(db: Db, query: CredentialQuery, language
   return listed(db, query, language).orderByRaw(orderOf(sort)).pluck('id')
 }
 
-/** The credentials with these ids as lines, in the order of the ids. */
-export async function listCredentialsByIds(db: Db, ids: string[], today: string): Promise<CredentialItem[]> {
-  const rows: ListRow[] = await listed(db, { scope: { all: true }, today, ids }, 'en').select('*')
-  const byId = new Map(rows.map(row => [row.id, toItem(row, today)]))
+/** Lines with these ids: their plain columns, and state and last good day worked out once for each. */
+async function readByIds<Row extends { id: string }>(db: Db, ids: readonly string[], today: string, columns: Record<string, string>): Promise<Row[]> {
+  const sql = credentialSql(parseCalendarDate(today))
+  const facts = narrow(db, sql, { scope: { all: true }, today, ids }).select([
+    ...Object.entries(columns).map(([name, column]) => `${column} as ${name}`), 'c.verification', 'c.withdrawnOn', 't.leadDays',
+    db.raw(`${sql.starts('c')} as starts_on`), db.raw(`${sql.expires('c')} as expires_on`),
+  ])
+  const rows = await db.withMaterialized('asked', db.raw(sql.asked)).withMaterialized('limited', db.raw(sql.limited)).withMaterialized('facts', facts)
+    .from('facts as f').select([...Object.keys(columns), 'expiresOn', db.raw(`${sql.stateOfFacts} as state`)]) as unknown as Row[]
+  const byId = new Map(rows.map(row => [row.id, row]))
   return ids.flatMap(id => byId.get(id) ?? [])
 }
+
+const itemColumns = {
+  id: 'c.id', personId: 'c.personId', person: 'p.name', sortName: 'p.sortName', badge: 'p.badge', employer: 'p.employer', crew: 'w.name', type: 't.code', nameEn: 't.nameEn', nameEs: 't.nameEs', module: 't.module',
+  basis: 't.basis', source: 't.source', issuedOn: 'c.issuedOn', number: 'c.number', issuer: 'c.issuer', siteId: 'c.siteId', site: 's.name', fileId: 'c.fileId', details: 'c.details',
+}
+
+/** The credentials with these ids as lines, in the order of the ids. */
+export async function listCredentialsByIds(db: Db, ids: readonly string[], today: string): Promise<CredentialItem[]> {
+  return (await readByIds<ListRow>(db, ids, today, itemColumns)).map(row => toItem(row, today))
+}
+
+/** What an exported list says of a credential, in one language. */
+export interface CredentialLine {
+  id: string
+  person: string
+  badge: string
+  employer: string
+  crew: string | null
+  typeName: string
+  number: string | null
+  issuer: string | null
+  source: string
+  issuedOn: string
+  expiresOn: string | null
+  state: CredentialState
+}
+
+/** The same for an export: only what its columns show, in one language. */
+export const listCredentialLines = (db: Db, ids: readonly string[], { today, language }: { today: string, language: 'en' | 'es' }): Promise<CredentialLine[]> =>
+  readByIds<CredentialLine>(db, ids, today, { id: 'c.id', person: 'p.name', badge: 'p.badge', employer: 'p.employer', crew: 'w.name', typeName: language === 'es' ? 't.nameEs' : 't.nameEn', number: 'c.number', issuer: 'c.issuer', source: 't.source', issuedOn: 'c.issuedOn' })
 
 /** How many of the filtered list expire on each day. */
 export async function countByExpiry(db: Db, query: CredentialQuery): Promise<{ date: string, count: number }[]> {

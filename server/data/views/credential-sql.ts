@@ -11,6 +11,10 @@ export interface CredentialSql {
   /** The last good day that counts, null when it never expires. */
   expires: (alias: string) => string
   state: string
+  /** The same over rows that hold `expires_on` and `starts_on` already, under the alias `f`: they are worked out once. */
+  stateOfFacts: string
+  /** The first day on which it can count. */
+  starts: (alias: string) => string
   /** The one counting credential of its person and type that lasts longest. */
   isEffective: string
   /** The effective one, or the expired one that lasted longest where nothing counts. */
@@ -39,12 +43,15 @@ export function credentialSql(today: string): CredentialSql {
   const sameKind = 'o.person_id = c.person_id and o.type_id = c.type_id and o.id <> c.id and (t.per_site = 0 or o.site_id is c.site_id)'
   const isEffective = `(${counting('c')} and not exists (select 1 from credentials o where ${sameKind} and ${counting('o')} and ${outlasts}))`
   const isStandingExpired = `(${expired('c')} and not exists (select 1 from credentials o where ${sameKind} and (${counting('o')} or (${expired('o')} and ${outlasts}))))`
+  const stateFrom = (at: { row: string, starts: string, expires: string, leadDays: string }) => `(case when ${at.row}.verification = 'rejected' then 'rejected' when ${at.row}.withdrawn_on <= ${day} then 'withdrawn' when ${at.row}.verification = 'unverified' then 'unverified' when ${at.starts} > ${day} then 'notYet' when ${at.expires} is null then 'inDate' when ${at.expires} < ${day} then 'expired' when ${at.expires} <= date(${day}, '+' || ${at.leadDays} || ' days') then 'dueSoon' else 'inDate' end)`
   const last = (days: number) => `date(${day}, '+${Math.trunc(days)} days')`
   return {
     asked: 'select distinct rt.type_id, d.id as duty_id, d.recency_months from rule_types rt join rules r on r.id = rt.rule_id join duties d on d.id = r.duty_id join credential_types t on t.id = rt.type_id where t.module is not null',
     limited: 'select type_id from asked group by type_id having count(*) = count(recency_months)',
     expires,
-    state: `(case when c.verification = 'rejected' then 'rejected' when c.withdrawn_on <= ${day} then 'withdrawn' when c.verification = 'unverified' then 'unverified' when ${starts('c')} > ${day} then 'notYet' when ${expires('c')} is null then 'inDate' when ${expires('c')} < ${day} then 'expired' when ${expires('c')} <= date(${day}, '+' || t.lead_days || ' days') then 'dueSoon' else 'inDate' end)`,
+    state: stateFrom({ row: 'c', starts: starts('c'), expires: expires('c'), leadDays: 't.lead_days' }),
+    stateOfFacts: stateFrom({ row: 'f', starts: 'f.starts_on', expires: 'f.expires_on', leadDays: 'f.lead_days' }),
+    starts,
     isEffective,
     isStanding: `(${isEffective} or ${isStandingExpired})`,
     isEmployed: `(p.hired_on <= ${day} and (p.left_on is null or p.left_on >= ${day}))`,
