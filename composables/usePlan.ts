@@ -1,3 +1,4 @@
+import type { ClearanceView } from '#shared/schemas/clearance'
 import type { CrewingView, UsualView } from '#shared/schemas/crewing'
 
 /**
@@ -13,6 +14,8 @@ export function usePlan(siteId: Ref<string>, date: Ref<string>) {
   const answer = ref<CrewingView | null>(null)
   const problem = ref('')
   const isAsking = ref(false)
+  /** Who is cleared for which duty that day: whom a hand may place. */
+  const cleared = ref<Record<string, string[]>>({})
   let asked = 0
 
   async function ask() {
@@ -40,6 +43,10 @@ export function usePlan(siteId: Ref<string>, date: Ref<string>) {
       usual.value = await useRequestFetch()<UsualView>('/api/crewing', { query: { site: siteId.value, date: date.value } })
       slots.value = Object.fromEntries(usual.value.slots.map(slot => [slot.duty, slot.count]))
       locked.value = []
+      const { people } = await useRequestFetch()<ClearanceView>('/api/clearance', { query: { site: siteId.value, date: date.value } })
+      const found: Record<string, string[]> = {}
+      for (const { personId, duties } of people) for (const { duty, state } of duties) if (state === 'cleared') (found[duty] ??= []).push(personId)
+      cleared.value = found
     }
     catch (error) {
       problem.value = toProblem(error).text
@@ -52,5 +59,10 @@ export function usePlan(siteId: Ref<string>, date: Ref<string>) {
     locked.value = isLocked ? locked.value.filter(place => place.personId !== personId) : [...locked.value, { duty, personId }]
     void ask()
   }
-  return { usual, slots, locked, needsFirstAid, answer, problem, isAsking, ask, load, toggleLock }
+  /** Puts somebody on a duty by hand, from wherever they were. */
+  function place(duty: string, personId: string) {
+    locked.value = [...locked.value.filter(one => one.personId !== personId), { duty, personId }]
+    void ask()
+  }
+  return { usual, slots, locked, cleared, place, needsFirstAid, answer, problem, isAsking, ask, load, toggleLock }
 }

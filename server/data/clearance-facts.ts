@@ -1,6 +1,6 @@
 import type { Knex } from 'knex'
 import type { ClearanceDuty, ClearancePerson, Hold } from '#shared/domain/clearance'
-import { dateInZone } from '#shared/domain/dates'
+import { addDays, dateInZone } from '#shared/domain/dates'
 import type { Learning } from '#shared/domain/missing'
 import type { Rule, RuleScope } from '#shared/domain/rules'
 import type { Credential, CredentialType, Validity } from '#shared/domain/validity'
@@ -94,13 +94,26 @@ export async function mapLastDutyDays(db: Db, whom: Whom, date: string): Promise
   return found
 }
 
-/** The day, in the company's zone, on which each module's quiz was last passed: by person, then by module. */
-export async function mapLearning(db: Db, whom: Whom, timeZone: string): Promise<Map<string, Map<string, Learning>>> {
-  const rows = await db('attempts').where({ passed: true }).modify(only(whom, 'personId'))
+/**
+ * The day, in the company's zone, on which each module's quiz was last passed, and the next day, from `date` on, for which
+ * practice is booked (a seat in a session of that module): by person, then by module.
+ */
+export async function mapLearning(db: Db, whom: Whom, { timeZone, date }: { timeZone: string, date: string }): Promise<Map<string, Map<string, Learning>>> {
+  const passed: { personId: string, module: string, submittedAt: string }[] = await db('attempts').where({ passed: true }).modify(only(whom, 'personId'))
     .groupBy('personId', 'module').select('personId', 'module').max('submittedAt as submittedAt')
+  const booked: { personId: string, module: string, startsAt: string, siteZone: string }[] = await db('renewalSeats').join('renewalRounds', 'renewalRounds.id', 'renewalSeats.roundId')
+    .join('credentialTypes', 'credentialTypes.id', 'renewalRounds.typeId').join('sites', 'sites.id', 'renewalRounds.siteId').whereNotNull('credentialTypes.module')
+    .whereIn('renewalSeats.state', ['invited', 'present']).whereIn('renewalRounds.state', ['planned', 'held']).where('renewalRounds.startsAt', '>=', addDays(date, -1)).modify(only(whom, 'renewalSeats.personId'))
+    .orderBy('renewalRounds.startsAt').select('renewalSeats.personId', 'credentialTypes.module', 'renewalRounds.startsAt', 'sites.timeZone as siteZone')
   const found = new Map<string, Map<string, Learning>>()
-  for (const row of rows as unknown as { personId: string, module: string, submittedAt: string }[]) {
-    found.set(row.personId, (found.get(row.personId) ?? new Map<string, Learning>()).set(row.module, { passedOn: dateInZone(row.submittedAt, timeZone) }))
+  const note = (personId: string, module: string, learned: Learning) => {
+    const known = found.get(personId) ?? new Map<string, Learning>()
+    found.set(personId, known.set(module, { ...learned, ...known.get(module) }))
+  }
+  for (const row of passed) note(row.personId, row.module, { passedOn: dateInZone(row.submittedAt, timeZone) })
+  for (const row of booked) {
+    const day = dateInZone(row.startsAt, row.siteZone)
+    if (day >= date) note(row.personId, row.module, { practiceFrom: day, practiceTo: day })
   }
   return found
 }

@@ -42,7 +42,7 @@ export async function openClearanceBook(db: Db, options: { whom: Whom, date: str
   const held = new Map([...credentials].map(([personId, list]) => [personId, credentialsByType(list)]))
   const holds = await mapHolds(db, whom)
   const lastDays = await mapLastDutyDays(db, whom, date)
-  const learning = await mapLearning(db, whom, timeZone)
+  const learning = await mapLearning(db, whom, { timeZone, date })
   const allowances = await mapAllowances(db, date)
   const dutyByCode = new Map(duties.map(duty => [duty.code, duty]))
   const askOn: ClearanceBook['askOn'] = (personId, code, siteId, onDate) => {

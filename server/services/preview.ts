@@ -91,5 +91,11 @@ function compare(questions: readonly Question[], before: Answers, after: Answers
     }
   }
   const all = [...effects.values()]
-  return { stops: all.filter(one => rank[one.becomes] < rank[one.was]), frees: all.filter(one => rank[one.becomes] > rank[one.was]) }
+  const clearedFor = (answers: Answers) => new Set([...answers].filter(([, state]) => state === 'cleared').map(([key]) => key.split(' ').at(-1)!))
+  const left = clearedFor(after)
+  return {
+    nobodyLeft: [...clearedFor(before)].filter(duty => !left.has(duty)),
+    stops: all.filter(one => rank[one.becomes] < rank[one.was]),
+    frees: all.filter(one => rank[one.becomes] > rank[one.was]),
+  }
 }

@@ -68,6 +68,7 @@ export type HoldsQuery = z.infer<typeof holdsQuery>
 
 const effect = z.object({ personId: z.string(), name: z.string(), duty: z.string(), siteId: z.string().nullable(), was: z.enum(clearanceStates), becomes: z.enum(clearanceStates) })
 /** What a change would do to the people now rostered; nothing of it is saved. */
-export const previewView = z.object({ stops: z.array(effect), frees: z.array(effect) })
+/** `nobodyLeft`: duties for which somebody is cleared now and nobody would be afterwards. */
+export const previewView = z.object({ stops: z.array(effect), frees: z.array(effect), nobodyLeft: z.array(z.string()) })
 export type PreviewView = z.infer<typeof previewView>
 export type Effect = z.infer<typeof effect>

@@ -65,3 +65,33 @@ test('a foreman finds on the phone who can do a duty today', async () => {
   expect(complaints).toEqual([])
   await context.close()
 })
+
+test('a hand with booked practice learns beside a cleared one, shown on the day\'s plan, and a placement by hand is kept', async () => {
+  const safety = await signedIn('safety')
+  const site = await siteNamed('Sagebrush Commons')
+  type People = { people: { personId: string, name: string, duties: { state: string, missing: { anyOf: string[] }[] }[] }[] }
+  const { people } = (await safety.get<People>(`/api/clearance?site=${site}&duty=rebar-hand`)).body
+  const learner = people.find(one => one.duties[0]!.state === 'notCleared' && one.duties[0]!.missing.length === 1 && one.duties[0]!.missing[0]!.anyOf.includes('steel'))!
+  const cleared = people.filter(one => one.duties[0]!.state === 'cleared')
+  const { today } = (await safety.get<{ today: string }>('/api/company')).body
+  await safety.post('/api/renewals', { type: 'steel', siteId: site, place: 'North wall', trainer: 'Iris Lang', date: today, time: '23:30', minutes: 60, seats: 1, personIds: [learner.personId] })
+
+  const { page, context, complaints } = await openAs('safety')
+  await visit(page, `/plan?site=${site}`)
+  await page.getByText('Change the places').click()
+  for (const box of await page.getByRole('spinbutton').all()) {
+    await box.fill('0')
+    await box.blur()
+  }
+  await page.getByRole('spinbutton', { name: 'Rebar hand' }).fill('1')
+  await page.getByRole('spinbutton', { name: 'Rebar hand' }).blur()
+  await page.getByText(new RegExp(`^${learner.name} learns beside `)).waitFor()
+  const other = cleared.find(one => one.name !== undefined)!
+  const by = (await page.getByText(new RegExp(`^${learner.name} learns beside `)).textContent())!.split(' learns beside ')[1]!.trim()
+  const wanted = cleared.find(one => one.name !== by) ?? other
+  await page.getByLabel('Place by hand:').selectOption({ label: wanted.name })
+  await page.getByText(new RegExp(`^${learner.name} learns beside ${wanted.name}`)).waitFor()
+  await page.getByText('by hand').first().waitFor()
+  expect(complaints).toEqual([])
+  await context.close()
+})

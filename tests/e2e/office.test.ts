@@ -1,4 +1,5 @@
 import type { Browser } from 'playwright-core'
+import { signedIn } from '../support/client'
 import { afterAll, beforeAll, expect, test } from 'vitest'
 import { desk, openBrowser, openDevice, phone, visit } from '../support/browser'
 
@@ -70,6 +71,28 @@ test('the safety manager sees whom a rule would stop before it is saved, and tak
   await line.getByRole('button', { name: 'Remove' }).click()
   await page.getByRole('dialog').getByRole('button', { name: 'Remove' }).click()
   await page.getByRole('heading', { level: 1, name: `${before} rules` }).waitFor()
+  expect(complaints).toEqual([])
+  await context.close()
+})
+
+test('a rule that would stop everybody asks twice, and is not saved by one tap', async () => {
+  const { page, context, complaints } = await openAs('safety')
+  await (await signedIn('safety')).post('/api/credential-types', { code: 'crane-signals', name: { en: 'Crane signals', es: 'Señas de grúa' }, validity: { kind: 'never' }, basis: 'company', source: 'Company rule' })
+  await visit(page, '/requirements')
+  const heading = page.getByRole('heading', { level: 1 })
+  const before = await heading.textContent()
+  await page.getByRole('button', { name: 'Add a rule' }).click()
+  await page.getByLabel('Asks for', { exact: true }).selectOption('crane-signals')
+  await page.getByRole('button', { name: 'See whom it stops' }).click()
+  const dialog = page.getByRole('dialog')
+  await dialog.getByRole('heading', { name: /^It stops \d+ people/ }).waitFor()
+  await dialog.getByRole('button', { name: 'Save it' }).click()
+  await dialog.getByText(/^Nobody would be cleared any more for: .*Stacker/).waitFor()
+  expect(await heading.textContent()).toBe(before)
+  await page.keyboard.press('Escape')
+  await dialog.waitFor({ state: 'hidden' })
+  await page.reload()
+  expect(await heading.textContent()).toBe(before)
   expect(complaints).toEqual([])
   await context.close()
 })

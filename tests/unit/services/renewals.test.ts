@@ -7,6 +7,7 @@ import { beforeEach, describe, expect, it } from 'vitest'
 import { addDays } from '#shared/domain/dates'
 import { renewalGroups, seatsFor } from '#shared/domain/renewals'
 import type { Db } from '../../../server/data/database'
+import { readClearance } from '../../../server/services/clearance'
 import { sendQueued } from '../../../server/services/mail-sending'
 import { toNumber } from '../../../server/services/mail'
 import { Refusal } from '../../../server/services/refusal'
@@ -105,6 +106,15 @@ describe('a renewal round', () => {
     expect(card).toMatchObject({ issuedOn: '2026-12-03', expiresOn: '2027-12-31', verification: 'verified', verifiedBy: 'sara', issuer: 'Iris Lang', verificationNote: 'List 12' })
     await expect(renewAll(await sara(onTheDay + 2), round.id, {})).rejects.toMatchObject({ code: 'nobodyToRenew' })
     expect((await suggestRenewals(await sara(onTheDay + 3), { weeks: 26 })).items).toMatchObject([{ people: [{ personId: 'olek' }] }])
+  })
+
+  it('of a module is booked practice: whoever has a seat works that day as learning beside, and on no other, and not who waits', async () => {
+    await db('assignments').insert(['nora', 'olek'].map(personId => ({ id: personId, personId, siteId: 'north', startsOn: '2026-11-02', createdAt: at })))
+    await bookRound(await sara(), { ...session, type: 'steel' })
+    const stateOn = async (date: string) => Object.fromEntries((await readClearance(await sara(), { site: 'north', date, duty: 'rebar-hand' })).people.map(person => [person.personId, person.duties[0]!.state]))
+    expect(await stateOn('2026-12-03')).toEqual({ nora: 'learning', olek: 'notCleared' })
+    expect(await stateOn('2026-12-04')).toEqual({ nora: 'notCleared', olek: 'notCleared' })
+    expect(await stateOn('2026-12-02')).toEqual({ nora: 'notCleared', olek: 'notCleared' })
   })
 
   it('refuses a past time, a stranger and a cancelled session', async () => {
