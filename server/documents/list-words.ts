@@ -1,6 +1,6 @@
 import type { Language } from '#shared/domain/states'
 
-export type ListName = 'people' | 'crews' | 'sites' | 'briefings' | 'nearMisses' | 'board' | 'lookAhead' | 'audit' | 'mail' | 'renewals' | 'packets'
+export type ListName = 'people' | 'crews' | 'sites' | 'briefings' | 'nearMisses' | 'board' | 'lookAhead' | 'audit' | 'mail' | 'renewals' | 'packets' | 'designations' | 'rules' | 'questions' | 'talks'
 
 export interface ListWords { title: string, fileName: string, columns: readonly string[] }
 
@@ -17,6 +17,10 @@ export const listWidths: Record<ListName, readonly number[]> = {
   mail: [24, 30, 40, 12, 8, 24, 40],
   renewals: [34, 24, 24, 20, 24, 10, 24, 18, 16, 13],
   packets: [24, 24, 24, 13, 14, 10, 10, 68],
+  designations: [26, 20, 26, 24, 50, 13, 13],
+  rules: [40, 80],
+  questions: [20, 24, 24, 30, 60, 60, 24],
+  talks: [40, 10, 40, 20, 12],
 }
 
 export const listWords: Record<Language, Record<ListName, ListWords>> = {
@@ -31,6 +35,10 @@ export const listWords: Record<Language, Record<ListName, ListWords>> = {
     audit: { title: 'Audit', fileName: 'audit', columns: ['No.', 'When', 'Who', 'What', 'About', 'Name', 'SHA-256'] },
     mail: { title: 'Messages', fileName: 'messages', columns: ['Written', 'To', 'Subject', 'State', 'Tries', 'Sent', 'Last error'] },
     renewals: { title: 'Renewal sessions', fileName: 'renewals', columns: ['Credential', 'When', 'Site', 'Place', 'Trainer', 'State', 'Person', 'Crew', 'Attendance', 'Card ends'] },
+    designations: { title: 'Named in writing', fileName: 'named', columns: ['Person', 'As', 'For', 'Site', 'Authority', 'From', 'To'] },
+    rules: { title: 'Rules', fileName: 'rules', columns: ['Who', 'Asks for'] },
+    questions: { title: 'Questions to trainers', fileName: 'questions', columns: ['Asked', 'Who', 'Trainer', 'Module', 'Question', 'Answer', 'Answered by'] },
+    talks: { title: 'Talks', fileName: 'talks', columns: ['Talk', 'Minutes', 'Tags', 'Seasons', 'Company'] },
     packets: { title: 'Site packets', fileName: 'packets', columns: ['Site', 'Made by', 'Made', 'Works until', 'State', 'People', 'Looks', 'SHA-256'] },
   },
   es: {
@@ -44,6 +52,10 @@ export const listWords: Record<Language, Record<ListName, ListWords>> = {
     audit: { title: 'Registro de cambios', fileName: 'registro', columns: ['N.º', 'Cuándo', 'Quién', 'Qué', 'Sobre', 'Nombre', 'SHA-256'] },
     mail: { title: 'Mensajes', fileName: 'mensajes', columns: ['Escrito', 'Para', 'Asunto', 'Estado', 'Intentos', 'Enviado', 'Último error'] },
     renewals: { title: 'Sesiones de renovación', fileName: 'renovaciones', columns: ['Credencial', 'Cuándo', 'Obra', 'Lugar', 'Instructor', 'Estado', 'Persona', 'Cuadrilla', 'Asistencia', 'Vence'] },
+    designations: { title: 'Nombramientos por escrito', fileName: 'nombramientos', columns: ['Persona', 'Como', 'Para', 'Obra', 'Autoridad', 'Desde', 'Hasta'] },
+    rules: { title: 'Reglas', fileName: 'reglas', columns: ['Quién', 'Pide'] },
+    questions: { title: 'Preguntas a instructores', fileName: 'preguntas', columns: ['Cuándo', 'Quién', 'Instructor', 'Módulo', 'Pregunta', 'Respuesta', 'Respondió'] },
+    talks: { title: 'Pláticas', fileName: 'platicas-biblioteca', columns: ['Plática', 'Minutos', 'Temas', 'Temporadas', 'De la empresa'] },
     packets: { title: 'Expedientes de obra', fileName: 'expedientes', columns: ['Obra', 'Hecho por', 'Hecho', 'Sirve hasta', 'Estado', 'Personas', 'Vistas', 'SHA-256'] },
   },
 }

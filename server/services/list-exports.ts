@@ -5,8 +5,10 @@ import type { ExportFormat, Page } from '#shared/schemas/common'
 import type { LookAheadQuery } from '#shared/schemas/look-ahead'
 import type { MailQuery } from '#shared/schemas/mail'
 import type { PeopleQuery } from '#shared/schemas/people'
+import type { DesignationsQuery } from '#shared/schemas/requirements'
 import { listStoredTypes } from '../data/credentials'
 import { listDuties } from '../data/duties'
+import { mapSiteNames } from '../data/views/names'
 import { listWidths, listWords, type ListName } from '../documents/list-words'
 import { screenWord } from '../documents/screen-words'
 import { inOnePiece, type TableRow } from '../documents/table-files'
@@ -17,11 +19,16 @@ import { readCrews } from './crews'
 import { readLookAhead } from './look-ahead'
 import { readMailQueue } from './mail-queue'
 import { readNearMisses } from './near-misses'
+import { readDesignations } from './designations'
 import { readPackets } from './packets'
 import { readPeople } from './people'
 import { readRounds } from './renewals'
+import { readRules } from './rules'
 import { readSites } from './sites'
 import { exportTable, pagesOf, toRows } from './table-export'
+import { toListItem, type Talk } from './talks'
+import type { Teaching } from './teaching'
+import { readQuestions } from './trainer-questions'
 import type { Work } from './work'
 
 /** Filters of a list without its pages, and the format of the file. */
@@ -131,3 +138,34 @@ export const exportPackets = (work: Work, { format, ...query }: Asked<Parameters
   write(work, format, 'packets', toRows(pagesOf(paging => readPackets(work, { ...query, ...paging })), packet => ({ cells: [
     packet.site, packet.madeBy, moment(packet.madeAt, work.company.timeZone), { date: packet.endsOn }, word(work, `packets.${packet.state}`), packet.people, packet.views.length, packet.hash,
   ] })))
+
+/** Everybody named in writing within reach. */
+export async function exportDesignations(work: Work, { format, ...query }: Asked<DesignationsQuery>) {
+  const sites = await mapSiteNames(work.db)
+  return write(work, format, 'designations', toRows(pagesOf(paging => readDesignations(work, { ...query, ...paging })), named => ({ cells: [
+    named.name, word(work, `people.designationKinds.${named.kind}`), named.subject, named.siteId && sites.get(named.siteId), named.authority, { date: named.from }, named.to && { date: named.to },
+  ] })))
+}
+
+/** Every rule in words: whom it is for, and the groups of credentials it asks for. */
+export async function exportRules(work: Work, { format }: { format: ExportFormat }) {
+  const [nameOf, sites, types] = [await dutyNames(work), await mapSiteNames(work.db), new Map((await listStoredTypes(work.db)).map(type => [type.code, type.name[work.actor.language]]))]
+  const [or, and] = work.actor.language === 'es' ? [' o ', ' y '] : [' or ', ' and ']
+  return write(work, format, 'rules', toRows(pagesOf(paging => readRules(work, paging)), ({ appliesTo, groups }) => ({ cells: [
+    [appliesTo.duty && nameOf(appliesTo.duty), appliesTo.site && (sites.get(appliesTo.site) ?? appliesTo.site)].filter(Boolean).join(', ') || word(work, 'requirements.everybody'),
+    groups.map(group => group.map(code => types.get(code) ?? code).join(or)).join(and),
+  ] })))
+}
+
+/** The questions to trainers that the actor sees, with their answers. */
+export async function exportQuestions(work: Work, teaching: Teaching, { format }: { format: ExportFormat }) {
+  const { items } = await readQuestions(work, teaching, work.actor.language)
+  const { timeZone } = work.company
+  return write(work, format, 'questions', inOnePiece(items.map(one => ({ cells: [moment(one.askedAt, timeZone), one.person, one.trainer, one.title, one.question, one.answer, one.answeredBy] }))))
+}
+
+/** Every talk of the library and the company. */
+export const exportTalks = (work: Work, talks: Iterable<Talk>, { format }: { format: ExportFormat }) =>
+  write(work, format, 'talks', inOnePiece([...talks].map(talk => toListItem(talk, work.actor.language)).map(talk => ({ cells: [
+    talk.title, talk.minutes, talk.tags.map(tag => screenWord(work.actor.language, `briefing.tag.${tag}`)).join(', '), talk.seasons.join(', '), talk.isCompany ? '✓' : null,
+  ] }))))

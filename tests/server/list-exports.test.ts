@@ -38,6 +38,9 @@ const lists: [string, 'safety' | 'office', string, () => Promise<number>][] = [
   ['look-ahead', 'safety', 'weeks=26', async () => (await safety.get<{ events: unknown[] }>('/api/look-ahead?weeks=26')).body.events.length],
   ['audit', 'safety', 'to=2026-11-30', async () => (await safety.get<Total>('/api/audit?to=2026-11-30')).body.total],
   ['mail', 'office', '', async () => (await office.get<Total>('/api/mail')).body.total],
+  ['talks', 'safety', '', async () => (await safety.get<Items>('/api/talks')).body.items.length],
+  ['rules', 'safety', '', async () => (await safety.get<Total>('/api/rules')).body.total],
+  ['designations', 'safety', 'kind=assessor', async () => (await safety.get<Total>('/api/designations?kind=assessor')).body.total],
   ['packets', 'safety', '', async () => (await safety.get<Total>('/api/packets')).body.total],
 ]
 
@@ -80,7 +83,7 @@ describe('every list as a file', () => {
     expect((await office.get('/api/people/export?format=csv&page=2')).status).toBe(400)
     for (const who of ['installer', 'foreman'] as const) {
       const client = await signedIn(who)
-      for (const list of ['people', 'crews', 'sites', 'briefings', 'near-misses', 'clearance', 'look-ahead', 'audit', 'mail', 'renewals']) expect((await client.get(`/api/${list}/export?format=csv`)).status).toBe(403)
+      for (const list of ['people', 'crews', 'sites', 'briefings', 'near-misses', 'clearance', 'look-ahead', 'audit', 'mail', 'renewals', 'rules', 'designations']) expect((await client.get(`/api/${list}/export?format=csv`)).status).toBe(403)
     }
   })
 
