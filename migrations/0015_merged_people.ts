@@ -1,14 +1,13 @@
 import type { Knex } from 'knex'
 
-/** Somebody who stood in the list twice: the entry that was given up points at the one that stays. */
+/**
+ * Somebody who stood in the list twice: the entry that was given up points at the one that stays. Without a foreign key,
+ * because SQLite would then have to make the table anew, and everything else points at it.
+ */
 export async function up(knex: Knex): Promise<void> {
-  await knex.schema.alterTable('people', (table) => {
-    table.text('merged_into').references('people.id')
-  })
+  await knex.raw('alter table people add column merged_into text')
 }
 
 export async function down(knex: Knex): Promise<void> {
-  await knex.schema.alterTable('people', (table) => {
-    table.dropColumn('merged_into')
-  })
+  await knex.raw('alter table people drop column merged_into')
 }

@@ -38,6 +38,30 @@ describe('migrations', () => {
   })
 })
 
+describe('a database in use', () => {
+  it('is taken through every later migration with its rows kept', async () => {
+    const db = knex({ ...knexConfigFor(':memory:'), migrations: { migrationSource } })
+    for (let count = 0; count < 6; count += 1) await db.migrate.up()
+    const at = '2026-01-05T14:00:00.000Z'
+    await db('people').insert(['one', 'two'].map(id => ({ id, name: id, sortName: id, badge: id, role: 'worker', language: 'en', employer: 'Test', employerKind: 'own', hiredOn: '2026-01-05', createdAt: at, updatedAt: at })))
+    await db('crews').insert({ id: 'crew', name: 'Crew', foremanId: 'one', createdAt: at })
+    await db('people').where({ id: 'two' }).update({ crewId: 'crew' })
+    await db('sites').insert({ id: 'site', code: 'site', name: 'Site', timeZone: 'UTC', superintendentId: 'one', createdAt: at })
+    await db('credentialTypes').insert({ id: 'type', code: 'type', nameEn: 'Type', nameEs: 'Tipo', validityKind: 'never', basis: 'company', source: 'Company rule', createdAt: at })
+    await db('credentials').insert({ id: 'card', personId: 'two', typeId: 'type', issuedOn: '2026-01-05', verification: 'verified', verifiedBy: 'one', cardCode: 'CODE', createdAt: at })
+    await db('attempts').insert({ id: 'attempt', personId: 'two', module: 'stacking', language: 'en', seed: 's', served: '{}', startedAt: at, endsAt: at })
+    await db('audit').insert({ seq: 1, at, actorId: 'one', action: 'a', subjectKind: 'person', subjectId: 'two', detailsDigest: '', previousHash: '', hash: '' })
+    await db('mail').insert({ id: 'mail', key: 'k', recipient: 'a@test.example', personId: 'two', subject: 's', body: 'b', state: 'queued', tries: 0, nextTryAt: at, createdAt: at })
+    const before = await Promise.all(['people', 'crews', 'credentials', 'attempts', 'audit', 'mail'].map(table => db(table).select('*')))
+    await db.migrate.latest()
+    const after = await Promise.all(['people', 'crews', 'credentials', 'attempts', 'audit', 'mail'].map(table => db(table).select('*')))
+    expect(after).toMatchObject(before)
+    expect(await db.raw('pragma foreign_key_check')).toEqual([])
+    expect((await db.migrate.list())[1]).toEqual([])
+    await db.destroy()
+  })
+})
+
 describe('an opened database', () => {
   it('keeps what it acknowledged through a power cut, and its foreign keys', async () => {
     const db = await openTestDatabase()
