@@ -28,7 +28,7 @@ const words: Record<Language, ReminderWords> = {
     more: count => `- and ${count} more`,
   },
   es: {
-    subject: (expired, ahead) => [expired && `${expired} vencidas`, ahead && `${ahead} por vencer`].filter(Boolean).join(', ').replace(/^/, 'Credenciales: '),
+    subject: (expired, ahead) => [expired && `${expired} ${expired === 1 ? 'vencida' : 'vencidas'}`, ahead && `${ahead} por vencer`].filter(Boolean).join(', ').replace(/^/, 'Credenciales: '),
     hello: name => `${name}:`,
     own: 'Estas son suyas.',
     others: 'Estas están a su cargo.',

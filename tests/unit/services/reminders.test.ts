@@ -48,7 +48,7 @@ describe('the daily run', () => {
     expect(hand).toMatchObject({ recipient: 'hal@test.example', subject: 'Credentials: 1 expired, 1 expiring soon' })
     expect(hand!.body).toContain('Lift truck evaluation: Sat, Nov 28, 2026 (3 days ago)')
     expect(hand!.body).not.toContain('Quispe')
-    expect(foreman).toMatchObject({ recipient: 'fay@test.example', subject: 'Credenciales: 1 vencidas, 1 por vencer' })
+    expect(foreman).toMatchObject({ recipient: 'fay@test.example', subject: 'Credenciales: 1 vencida, 1 por vencer' })
     expect(foreman!.body).toContain('Hand, Hal: Primeros auxilios y RCP')
     expect(safety!.body).toContain('Quispe, Inés')
     expect(await runOn('2026-12-01', '20:00:00Z')).toBe(0)
