@@ -36,7 +36,7 @@ describe('the review of questions over the API', () => {
     ['GET', '/api/item-review?module=stacking&lang=es', undefined, 400],
     ['GET', '/api/item-review?module=Not%20a%20slug', undefined, 400],
     ['GET', '/api/item-review/export?module=stacking', undefined, 400],
-    ['GET', '/api/item-review/export?module=stacking&format=pdf', undefined, 400],
+    ['GET', '/api/item-review/export?module=stacking&format=ics', undefined, 400],
     ['GET', '/api/item-review/export?module=welding&format=csv', undefined, 404],
     ['GET', '/api/item-review/no-such-01', undefined, 404],
     ['GET', '/api/item-review/Not%20an%20item', undefined, 400],
