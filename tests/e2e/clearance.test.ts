@@ -89,7 +89,7 @@ test('a hand with booked practice learns beside a cleared one, shown on the day\
   const other = cleared.find(one => one.name !== undefined)!
   const by = (await page.getByText(new RegExp(`^${learner.name} learns beside `)).textContent())!.split(' learns beside ')[1]!.trim()
   const wanted = cleared.find(one => one.name !== by) ?? other
-  await page.getByLabel('Place by hand:').selectOption({ label: wanted.name })
+  await page.getByRole('listitem').filter({ hasText: 'Rebar hand' }).getByLabel('Place by hand:').selectOption({ label: wanted.name })
   await page.getByText(new RegExp(`^${learner.name} learns beside ${wanted.name}`)).waitFor()
   await page.getByText('by hand').first().waitFor()
   expect(complaints).toEqual([])

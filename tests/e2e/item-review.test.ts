@@ -30,6 +30,7 @@ test('the safety manager sees which questions need a look, narrows by language, 
   expect(await asked()).toBeLessThan(inAll)
   await page.getByRole('button', { name: 'Asked' }).click()
   await page.waitForURL(/sort=served/)
+  await page.getByText('Export', { exact: false }).first().click()
   const [download] = await Promise.all([page.waitForEvent('download'), page.getByRole('link', { name: 'CSV', exact: true }).click()])
   expect(download.suggestedFilename()).toMatch(/^question-review-[\w-]+-es-2026-12-01\.csv$/)
   expect(complaints).toEqual([])

@@ -21,7 +21,7 @@ test('people whose cards end are booked into one session, see it on their phone,
   const { page, context, complaints } = await openAs('safety')
   await visit(page, '/renewals?weeks=26')
   await page.getByRole('heading', { level: 1, name: /people have cards to renew within 26 weeks/ }).waitFor()
-  const group = page.locator('li').filter({ hasText: 'Heat illness prevention' }).first()
+  const group = page.locator('li').filter({ hasText: 'Heat illness prevention' }).filter({ hasText: 'Book a session' }).first()
   const ended = Number(/(\d+) (?:person|people)/.exec((await group.textContent())!)![1])
   await group.getByText('Book a session').click()
   const today = (await safety.get<{ today: string }>('/api/company')).body.today
